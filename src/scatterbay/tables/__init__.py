@@ -1,0 +1,1 @@
+"""Reads the shipped tables on first use: each with its source, range and interpolation rule."""
