@@ -1,0 +1,1 @@
+"""Pure functions on arrays: scattering, attenuation, spectra, dose quantities, and barrier transport."""
