@@ -53,3 +53,26 @@ def hermite(x: Array, nodes: Array, values: Array, slopes: Array) -> Array:
 def cubic(x: Array, nodes: Array, values: Array) -> Array:
     """Shape-preserving cubic through (nodes, values) at x; the caller keeps x inside the nodes."""
     return hermite(x, nodes, values, cubic_slopes(nodes, values))
+
+
+def spline_matrix(nodes: Array, x: Array) -> Array:
+    """Matrix (m, n) that turns values at the nodes (n,) into the cubic spline's values at x (m,).
+
+    Third derivatives are continuous at the second and the last but one node ("not a knot"); n is at least 4.
+    """
+    n, steps = nodes.size, np.diff(nodes)
+    system, right = np.zeros((n, n)), np.zeros((n, n))
+    for i in range(1, n - 1):
+        system[i, i - 1 : i + 2] = steps[i - 1], 2.0 * (steps[i - 1] + steps[i]), steps[i]
+        right[i, i - 1 : i + 2] = 6.0 / steps[i - 1], -6.0 * (1.0 / steps[i - 1] + 1.0 / steps[i]), 6.0 / steps[i]
+    system[0, :3] = -steps[1], steps[0] + steps[1], -steps[0]
+    system[-1, -3:] = -steps[-1], steps[-2] + steps[-1], -steps[-2]
+    curvature = np.linalg.solve(system, right)
+    index = np.clip(np.searchsorted(nodes, x, side="right") - 1, 0, n - 2)
+    step, rows = steps[index], np.arange(x.size)
+    a, b = (nodes[index + 1] - x) / step, (x - nodes[index]) / step
+    result = ((a**3 - a) * step**2 / 6.0)[:, None] * curvature[index]
+    result += ((b**3 - b) * step**2 / 6.0)[:, None] * curvature[index + 1]
+    result[rows, index] += a
+    result[rows, index + 1] += b
+    return result
