@@ -145,7 +145,7 @@ class Leakage:
 
 @dataclass(frozen=True)
 class XrayTube:
-    """An X-ray tube: constant potential, current, filtration; measured output or half-value layer if given."""
+    """An X-ray tube: constant potential, current, filtration; measured output, half-value layer if given."""
 
     name: str
     voltage: Quantity

@@ -8,7 +8,7 @@ from __future__ import annotations
 
 from scatterbay.units.kinds import KINDS, WEEK_SECONDS, YEAR_WEEKS, Kind
 from scatterbay.units.problem import TextError, nearest
-from scatterbay.units.quantity import Quantity, read
+from scatterbay.units.quantity import Quantity, read, read_number
 from scatterbay.units.show import choose_unit, factor_of, format_quantity, significant
 
 __all__ = [
@@ -23,5 +23,6 @@ __all__ = [
     "format_quantity",
     "nearest",
     "read",
+    "read_number",
     "significant",
 ]

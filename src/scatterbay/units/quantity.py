@@ -14,6 +14,7 @@ from scatterbay.units.table import NONE, REFUSED, Dims, Unit, dims
 
 _NUMBER = r"[+-]?(?:(?:\d+\s+)?\d+/\d+|(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)"
 _AMOUNT = re.compile(rf"\s*(?P<number>{_NUMBER})(?P<unit>.*?)(?=\s+[+-]?\.?\d|$)", re.ASCII)
+_PLAIN_NUMBER = re.compile(rf"\s*(?P<number>{_NUMBER})\s*(?P<percent>%?)\s*", re.ASCII)
 _TOLERANCE = re.compile(r"\+\s*/?\s*-|±")
 _COMMA = re.compile(r"\d,\d")
 _ADDS_UP = (dims(m=1), dims(s=1))
@@ -61,6 +62,20 @@ def read(text: str, *kinds: str) -> Quantity:
     kind = _kind_for(unit, text, wanted)
     tolerance = 0.0 if len(parts) == 1 else _half_width(parts[1], text, value, kind, marks[0].end())
     return Quantity(value, tolerance, kind.name, text.strip())
+
+
+def read_number(text: str, hint: str = "") -> float:
+    """A plain number from text: ``0.25``, ``1/4``, ``25 %``.
+
+    Raises
+    ------
+    TextError : anything else, a unit for example.
+    """
+    match = _PLAIN_NUMBER.fullmatch(plain(text))
+    if match is None:
+        raise TextError(f"'{text}' is not a plain number", hint)
+    value = _number(match["number"], text, 0)
+    return value / 100.0 if match["percent"] else value
 
 
 def _shared_unit(parts: list[str]) -> str:
@@ -130,20 +145,22 @@ def _kind_for(unit: Unit, text: str, wanted: tuple[Kind, ...]) -> Kind:
     if found and found.dims == NONE:
         named = "a plain number"
     names = " or ".join(kind.article for kind in wanted)
+    needed = f"where {names} is needed" if len(wanted) < 3 else "which is not what is needed here"
     why = _why_not(unit.dims, wanted)
     hint = f"{why}; {_example(wanted)}" if why else _example(wanted)
-    raise TextError(f"'{text}' is {named}, where {names} is needed", hint)
+    raise TextError(f"'{text}' is {named}, {needed}", hint)
 
 
 def _why_not(found: Dims, wanted: tuple[Kind, ...]) -> str:
     """The reason behind a confusion people often make, or nothing."""
     gray, sievert = (dims(Gy=1).index(1), dims(Sv=1).index(1))
-    if found[gray] and any(kind.dims[sievert] for kind in wanted):
+    grays, sieverts = (any(kind.dims[base] for kind in wanted) for base in (gray, sievert))
+    if found[gray] and sieverts and not grays:
         return "Gy is air kerma and Sv is dose equivalent: they are not the same number"
-    if found[sievert] and any(kind.dims[gray] for kind in wanted):
+    if found[sievert] and grays and not sieverts:
         return "Sv is dose equivalent and Gy is air kerma: they are not the same number"
     angle, week, year = (dims(rad=1).index(1), dims(week=1).index(1), dims(year=1).index(1))
-    if found[angle] and any(kind.dims[gray] or kind.dims[sievert] for kind in wanted):
+    if found[angle] and (grays or sieverts):
         return "; ".join(REFUSED["rad as dose"])
     if (found[week] or found[year]) and not any(kind.dims[week] or kind.dims[year] for kind in wanted):
         return "an amount per week or year is not a rate at a moment"

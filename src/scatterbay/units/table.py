@@ -96,10 +96,14 @@ _PEAK = (
     "'{symbol}' is not a unit of voltage here",
     "write kV: the tube is taken at constant potential, which gives more than a pulsed one of the same peak",
 )
+_SHORT = "'{symbol}' is not used here"
 REFUSED: dict[str, tuple[str, str]] = {
     **dict.fromkeys(("R", "mR", "uR", "kR", "roentgen", "roentgens", "Roentgen", "r", "mr"), _ROENTGEN),
     **dict.fromkeys(("mrad", "krad", "urad", "rads", "mrads"), _RAD),
     **dict.fromkeys(("kVp", "kVP", "kvp", "KVP", "kVcp"), _PEAK),
+    **dict.fromkeys(("y", "yr", "yrs", "a", "annum"), (_SHORT, "write year")),
+    **dict.fromkeys(("wk", "wks", "w"), (_SHORT, "write week")),
+    **dict.fromkeys(("month", "months", "quarter"), (_SHORT, "write week or year")),
     "rad as dose": (_RAD[0].format(symbol="rad"), _RAD[1]),
 }
 """Units that people write and that must not be let through: message and hint for each."""

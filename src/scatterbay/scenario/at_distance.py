@@ -1,0 +1,77 @@
+"""Figures stated at a distance, brought to 1 m by the inverse square: leakage and tube output."""
+
+from __future__ import annotations
+
+import re
+from dataclasses import replace
+
+from scatterbay.units import Quantity, TextError, read
+from scatterbay.units.expression import plain
+
+_TOLERANCE = re.compile(r"\+\s*/?\s*-|±")
+_AT = re.compile(r"(?P<figure>.+?)\s+at\s+(?P<distance>.+)")
+
+
+def leakage_rate(text: str) -> Quantity:
+    """Leakage at 1 m from ``5 mGy/h at 1 m``: an air kerma rate or an ambient dose equivalent rate.
+
+    Raises
+    ------
+    TextError : no distance, a wrong unit, a value that is not above zero.
+    """
+    example = "say where: '5 mGy/h at 1 m' (or in Sv), or 'none'"
+    figure, distance, start = _parts(text)
+    rate = _above_zero(figure, 0, "air kerma rate", "ambient dose equivalent rate")
+    if distance is None:
+        raise TextError(f"'{text}' has no distance", example)
+    return _at_one_metre(rate, distance, start, text)
+
+
+def tube_output(text: str) -> Quantity:
+    """Tube output at 1 m [Gy m2/C] from ``9.8 mGy m2/(mA min)`` or ``0.05 mGy/(mA s) at 1 m``.
+
+    Raises
+    ------
+    TextError : a wrong unit, a missing or needless distance, a value that is not above zero.
+    """
+    figure, distance, start = _parts(text)
+    output = _above_zero(figure, 0, "tube output", "air kerma per charge")
+    if output.kind == "tube output":
+        if distance is not None:
+            raise TextError(
+                f"'{text}': an output in m2 needs no distance", "leave out the distance, or the m2", start
+            )
+        return replace(output, text=text.strip())
+    if distance is None:
+        raise TextError(f"'{text}' has no distance", "say where: '0.05 mGy/(mA s) at 1 m'")
+    return replace(_at_one_metre(output, distance, start, text), kind="tube output")
+
+
+def _parts(text: str) -> tuple[str, str | None, int]:
+    """Figure, distance (None if not given), and where the distance starts; a tolerance may follow either."""
+    ready = plain(text).strip()
+    match = _AT.fullmatch(ready)
+    if match is None:
+        return ready, None, 0
+    mark = _TOLERANCE.search(match["distance"])
+    end = mark.start() if mark else len(match["distance"])
+    distance, tolerance = match["distance"][:end], match["distance"][end:]
+    return f"{match['figure']} {tolerance}".strip(), distance.strip(), match.start("distance")
+
+
+def _above_zero(text: str, start: int, *kinds: str) -> Quantity:
+    try:
+        found = read(text, *kinds)
+    except TextError as problem:
+        raise problem.moved(start) from None
+    if found.value <= 0.0:
+        raise TextError(f"'{text}' must be above zero", "", start)
+    return found
+
+
+def _at_one_metre(figure: Quantity, distance: str, start: int, text: str) -> Quantity:
+    metres = _above_zero(distance, start, "length").value
+    square = metres * metres
+    return replace(
+        figure, value=figure.value * square, tolerance=figure.tolerance * square, text=text.strip()
+    )

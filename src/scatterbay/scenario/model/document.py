@@ -1,0 +1,49 @@
+"""The whole file as it is written."""
+
+from __future__ import annotations
+
+from typing import Literal
+
+from pydantic import Field
+
+from scatterbay.scenario.model.base import Form, Maybe
+from scatterbay.scenario.model.bodies import Body
+from scatterbay.scenario.model.kinds import Density, Formula, MassFractions, NameLists, Notes, Text
+from scatterbay.scenario.model.room import Room
+from scatterbay.scenario.model.sources import Source
+from scatterbay.scenario.model.use import Beam, Options, People, Place, Workload
+
+
+class Material(Form):
+    """A material the tables lack: mass fractions or a formula, and a density."""
+
+    mass_fractions: MassFractions | None = Field(None, description="By element symbol; they add up to 1")
+    formula: Formula | None = Field(None, description="Chemical formula, instead of mass fractions")
+    density: Density = Field(description="Density")
+
+
+class Document(Form):
+    """A scenario: a room, what is in it, what radiates, and who stands where."""
+
+    format: Maybe[Literal[1]] = Field(description="Version of the file format")
+    title: Maybe[Text] = Field(description="What this is")
+    drawing: Maybe[Text | None] = Field(None, description="The drawing it was taken from, with its revision")
+    notes: Maybe[Notes | None] = Field(None, description="Remarks")
+    room: Maybe[Room] = Field(description="The room")
+    materials: Maybe[dict[str, Maybe[Material]]] = Field({}, description="Materials of your own, by name")
+    bodies: Maybe[dict[str, Maybe[Body]]] = Field({}, description="Things that scatter, by name")
+    sources: Maybe[dict[str, Maybe[Source]]] = Field(description="What radiates, by name")
+    beams: Maybe[dict[str, Maybe[Beam]]] = Field(description="Where sources stand and point, by name")
+    workload: Maybe[dict[str, Maybe[Workload]]] = Field(description="How long each beam is on, by its name")
+    people: Maybe[dict[str, Maybe[People]]] = Field(description="Groups of people, by name")
+    places: Maybe[dict[str, Maybe[Place]]] = Field(description="Where people may stand, by name")
+    never_together: Maybe[NameLists | None] = Field(
+        None, description="Lists of beams that are never on at the same time; all others run together"
+    )
+    options: Maybe[Options | None] = Field(None, description="Choices about the calculation")
+
+
+NAMED = ("materials", "bodies", "sources", "beams", "workload", "people", "places")
+"""Sections whose entries are named by the author."""
+
+NAMED_IN_ROOM = ("sides", "openings", "screens")

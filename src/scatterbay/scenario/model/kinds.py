@@ -1,0 +1,145 @@
+"""The types of the file's values: what Python sees, how it is read, what the schema says."""
+
+from __future__ import annotations
+
+import math
+from typing import Annotated, TypeAlias
+
+from scatterbay.scenario import parts
+from scatterbay.scenario.at_distance import tube_output
+from scatterbay.scenario.field_text import beam_field
+from scatterbay.scenario.formulas import mass_fractions
+from scatterbay.scenario.make_ups import one_layer
+from scatterbay.scenario.model import readers, schemas, values
+from scatterbay.scenario.model.base import FromText
+from scatterbay.scenario.model.readers import GROUND
+from scatterbay.scenario.model.values import Point2, Point3
+from scatterbay.units import Quantity
+
+
+def _aim_schema() -> schemas.Schema:
+    named = schemas.text("The name of a body or place, or a direction", "pipe", "down")
+    return {"anyOf": [schemas.coordinates(3, "A position", [3.0, 2.2, 1.0]), named]}
+
+
+_MAKE_UP = schemas.text(
+    "Layers from the inside to the outside, each a material and a thickness, joined by '+'; or 'open'",
+    "concrete 300 mm",
+    "gypsum board 12.5 mm + lead 1.5 mm",
+    "concrete 300 mm +/- 10 mm",
+    "open",
+)
+_LAYERS = {**_MAKE_UP, "description": "Layers joined by '+'", "examples": ["aluminium 3 mm", "none"]}
+_LAYER = schemas.text("A material and a thickness", "aluminium 3.2 mm")
+_FLOOR = {**_MAKE_UP, "description": f"Layers from the inside down, or '{GROUND}', or both"}
+_FLOOR["examples"] = [GROUND, "concrete 200 mm", f"concrete 150 mm {GROUND}"]
+_GOAL = schemas.text(
+    "A design goal",
+    "7.5 uSv/h",
+    "20 uSv in an hour",
+    "7.5 uSv/h over 8 h",
+    "0.1 mGy/week",
+    "6 mSv/year",
+)
+_GOALS = {"anyOf": [{"type": "array", "items": _GOAL, "minItems": 1}, _GOAL]}
+_FIELD = schemas.text("The shape of the beam", "200 mm x 300 mm at 700 mm", "cone 40 deg", "all round")
+_TIME = schemas.quantity("time", "charge", examples=("25 min", "40 mA min"))
+_WEEKLY = schemas.quantity("time per week", "charge per week", examples=("6 h/week", "400 mA min/week"))
+_ANGLE = schemas.quantity("angle", examples=("30 deg",))
+_DATE = schemas.text("A date", "2026-03-01", pattern="^[0-9]{4}-[0-9]{2}-[0-9]{2}$")
+_NOTES = schemas.text("A remark", "demonstration data")
+_DIRECTION = {"anyOf": [schemas.coordinates(3, "A direction", [0, 1, 0]), {"enum": list(values.DIRECTIONS)}]}
+_WEEKS = schemas.number_or(schemas.text("Weeks a year", "48 weeks"), exclusiveMinimum=0, maximum=53)
+_FRACTIONS = {"type": "object", "additionalProperties": schemas.FACTOR, "minProperties": 1}
+_NAME_LISTS = {
+    "type": "array",
+    "items": {"type": "array", "items": {"type": "string"}, "minItems": 2, "uniqueItems": True},
+    "examples": [[["weld shot", "panoramic shot"]]],
+}
+_CORNERS = {
+    "type": "array",
+    "items": schemas.coordinates(2, "A corner [x, y]", [0, 0]),
+    "minItems": 3,
+    "examples": [[[0, 0], [6, 0], [6, 4.5], [0, 4.5]]],
+}
+
+
+def _rate(example: str, *more: str) -> schemas.Schema:
+    return schemas.text("A figure with its unit, and the distance it holds at", example, *more)
+
+
+Text: TypeAlias = Annotated[str, FromText(readers.name, schemas.text("A piece of text"))]
+Notes: TypeAlias = Annotated[
+    tuple[str, ...], FromText(readers.notes, {"anyOf": [_NOTES, {"type": "array", "items": _NOTES}]})
+]
+Name: TypeAlias = Annotated[str, FromText(readers.name, schemas.text("A name given in this file"))]
+MaterialName: TypeAlias = Annotated[
+    str, FromText(readers.material, schemas.text("A material", "steel", "water"))
+]
+
+Length: TypeAlias = Annotated[Quantity, FromText(values.quantity("length"), schemas.LENGTH)]
+LengthFromZero: TypeAlias = Annotated[
+    Quantity, FromText(values.quantity("length", lowest_allowed=True), schemas.LENGTH)
+]
+Angle: TypeAlias = Annotated[Quantity, FromText(values.quantity("angle", lowest=-math.inf), _ANGLE)]
+AnodeAngle: TypeAlias = Annotated[Quantity, FromText(values.quantity("angle", check=readers.acute), _ANGLE)]
+Density: TypeAlias = Annotated[
+    Quantity, FromText(values.quantity("density", check=readers.believable), schemas.quantity("density"))
+]
+Voltage: TypeAlias = Annotated[
+    Quantity, FromText(values.quantity("voltage", check=readers.tube_voltage), schemas.quantity("voltage"))
+]
+Current: TypeAlias = Annotated[Quantity, FromText(values.quantity("current"), schemas.quantity("current"))]
+Activity: TypeAlias = Annotated[
+    Quantity,
+    FromText(values.quantity("activity"), schemas.quantity("activity", examples=("3.7 TBq", "100 Ci"))),
+]
+TimePerWeek: TypeAlias = Annotated[
+    Quantity, FromText(values.quantity("time per week", "charge per week"), _WEEKLY)
+]
+Duration: TypeAlias = Annotated[Quantity, FromText(values.quantity("time", "charge"), _TIME)]
+
+Factor: TypeAlias = Annotated[float, FromText(values.factor, schemas.FACTOR)]
+Weeks: TypeAlias = Annotated[float, FromText(values.weeks, _WEEKS)]
+Date: TypeAlias = Annotated[str, FromText(values.iso_date, _DATE)]
+
+Position: TypeAlias = Annotated[
+    Point3, FromText(values.point, schemas.coordinates(3, "A position [x, y, z]", [3.0, 2.2, 1.0]))
+]
+PlanPosition: TypeAlias = Annotated[
+    Point2, FromText(values.plan_point, schemas.coordinates(2, "A position on plan [x, y]", [3.0, 2.2]))
+]
+Corners: TypeAlias = Annotated[tuple[Point2, ...], FromText(values.corners, _CORNERS)]
+Sizes: TypeAlias = Annotated[
+    Point3, FromText(values.sizes, schemas.coordinates(3, "Sizes along x, y and z", [0.3, 0.2, 0.5]))
+]
+Direction: TypeAlias = Annotated[Point3, FromText(values.direction, _DIRECTION)]
+Aim: TypeAlias = Annotated[Point3 | str, FromText(values.point_or_name, _aim_schema())]
+
+MakeUp: TypeAlias = Annotated[parts.MakeUp, FromText(readers.make_up(open_allowed=True), _MAKE_UP)]
+Floor: TypeAlias = Annotated[tuple[parts.MakeUp, bool], FromText(readers.floor, _FLOOR)]
+Filtration: TypeAlias = Annotated[parts.MakeUp, FromText(readers.filtration, _LAYERS)]
+OneLayer: TypeAlias = Annotated[
+    parts.Layer, FromText(values.in_text_with_names(one_layer, "aluminium 3.2 mm"), _LAYER)
+]
+Leakage: TypeAlias = Annotated[
+    Quantity | None, FromText(readers.leakage, _rate("5 mGy/h at 1 m", "20 uSv/h at 1 m", "none"))
+]
+Output: TypeAlias = Annotated[
+    Quantity,
+    FromText(
+        values.in_text(tube_output, "9.8 mGy m2/(mA min)"),
+        _rate("9.8 mGy m2/(mA min) +/- 8 %", "0.05 mGy/(mA s) at 1 m"),
+    ),
+]
+BeamField: TypeAlias = Annotated[parts.Field, FromText(values.in_text(beam_field, "cone 40 deg"), _FIELD)]
+Nuclide: TypeAlias = Annotated[str, FromText(readers.nuclide, schemas.text("A nuclide", "Ir-192", "Co-60"))]
+MassFractions: TypeAlias = Annotated[dict[str, float], FromText(readers.mass_fractions, _FRACTIONS)]
+Formula: TypeAlias = Annotated[
+    dict[str, float],
+    FromText(
+        values.in_text(mass_fractions, "CaSO4(H2O)2"), schemas.text("A formula", "CaSO4(H2O)2", "CaWO4")
+    ),
+]
+NameLists: TypeAlias = Annotated[tuple[tuple[str, ...], ...], FromText(readers.name_lists, _NAME_LISTS)]
+Goals: TypeAlias = Annotated[tuple[parts.Goal, ...], FromText(readers.goals, _GOALS)]

@@ -1,0 +1,84 @@
+"""Beams, how long they are on, the people and the places, as they are written."""
+
+from __future__ import annotations
+
+from typing import Literal
+
+from pydantic import Field
+
+from scatterbay.scenario.model.base import Form
+from scatterbay.scenario.model.kinds import (
+    Aim,
+    Angle,
+    BeamField,
+    Duration,
+    Factor,
+    Goals,
+    Length,
+    Name,
+    PlanPosition,
+    Position,
+    TimePerWeek,
+    Weeks,
+)
+
+
+class Beam(Form):
+    """A source at a position, pointed somewhere."""
+
+    source: Name = Field(description="Name of the source")
+    at: Position = Field(description="Position of the focal spot or the source [x, y, z]")
+    aim: Aim | None = Field(
+        None, description="A point on the axis [x, y, z], a body or place, or a direction word"
+    )
+    field: BeamField = Field(description="Shape of the beam")
+    field_turned: Angle | None = Field(
+        None, description="Rotation of the field about the axis; 0 if left out"
+    )
+    use_factor: Factor | None = Field(None, description="Share of the time it points this way; 1 if left out")
+    object: Literal["in the beam", "left out"] | None = Field(
+        None, description="Whether bodies weaken the primary beam; 'left out' (bare beam) if left out"
+    )
+
+
+class Workload(Form):
+    """How long a beam is on."""
+
+    beam_on: TimePerWeek = Field(description="Time or tube charge per week")
+    worst_hour: Duration | None = Field(None, description="Beam-on time (or charge) in the worst hour")
+    worst_day: Duration | None = Field(None, description="Beam-on time (or charge) in the worst 8 h")
+    weeks: Weeks | None = Field(None, description="Weeks a year; 52 if left out")
+
+
+class People(Form):
+    """A group of people and what they may receive."""
+
+    area: Literal["controlled", "supervised", "public"] = Field(description="The kind of area they are in")
+    goals: Goals = Field(description="Design goals, each with its time base")
+
+
+class Place(Form):
+    """A point where someone may stand: give one of at, beyond, above, below."""
+
+    at: Position | None = Field(None, description="The point itself [x, y, z]")
+    beyond: Name | None = Field(None, description="Behind this side or opening, 0.3 m from its outer face")
+    above: PlanPosition | None = Field(None, description="On the storey above [x, y], 0.5 m over its floor")
+    below: PlanPosition | None = Field(None, description="On the storey below [x, y], 1.7 m over its floor")
+    along: Length | None = Field(
+        None, description="With beyond a side: distance from the side's first corner"
+    )
+    height: Length | None = Field(None, description="With beyond: height above the floor; 1.2 m if left out")
+    gap: Length | None = Field(
+        None, description="With beyond: distance from the outer face, instead of 0.3 m"
+    )
+    people: Name = Field(description="Name of the group")
+    occupancy: Factor | None = Field(None, description="Share of the time someone is there; 1 if left out")
+
+
+class Options(Form):
+    """Choices about the calculation."""
+
+    primary_by: Literal["lit patch", "plane"] | None = Field(
+        None, description="Judge the primary beam on the patch it lights, or on a wall lit everywhere"
+    )
+    seed: int | None = Field(None, ge=0, le=2**32 - 1, description="Seed of the sampling; 1 if left out")
