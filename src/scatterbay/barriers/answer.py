@@ -91,8 +91,7 @@ class Answer:
         log = np.log(np.maximum(self.diffuse / self.outgoing_weights, FLOOR))
         fine = np.einsum("ca,naqm->ncqm", spline_matrix(self.cosines, incoming), log * self.cosines[:, None, None])
         fine /= incoming[:, None, None]
-        edges = np.clip(outgoing, self.outgoing[0], self.outgoing[-1])
-        over_out = cubic(edges, self.outgoing, fine)
+        over_out = cubic(outgoing, *_to_both_ends(self.outgoing, fine))
         return np.exp(self._over_energy(energy, np.moveaxis(over_out, 0, -1))).transpose(1, 3, 0, 2)
 
     def _over_energy(self, energy: Array, values: Array) -> Array:
@@ -120,6 +119,15 @@ class Answer:
         with np.load(io.BytesIO(content), allow_pickle=False) as kept:
             arrays = [kept[name] for name in ("energy", "cosines", "outgoing", "weights", "diffuse", "straight")]
         return cls(sheets, *arrays)
+
+
+def _to_both_ends(cosines: Array, values: Array) -> tuple[Array, Array]:
+    """Gauss nodes and logarithms at them (..., m), carried straight on to the cosines 0 and 1."""
+    first = values[..., 0] - cosines[0] * (values[..., 1] - values[..., 0]) / (cosines[1] - cosines[0])
+    slope = (values[..., -1] - values[..., -2]) / (cosines[-1] - cosines[-2])
+    last = values[..., -1] + (1.0 - cosines[-1]) * slope
+    ends = np.concatenate([first[..., None], values, last[..., None]], axis=-1)
+    return np.concatenate([[0.0], cosines, [1.0]]), ends
 
 
 def build_answer(sheets: Sheets) -> Answer:

@@ -1,0 +1,164 @@
+"""The faces of a scene with their make-ups, and dose per fluence behind whatever a ray crosses."""
+
+from __future__ import annotations
+
+import itertools
+from collections.abc import Sequence
+from dataclasses import dataclass, field
+
+import numpy as np
+from numpy.typing import NDArray
+
+from scatterbay.barriers.answer import Answer
+from scatterbay.barriers.makeup import Sheets
+from scatterbay.barriers.store import answer
+from scatterbay.engine.energies import Ladder, Rungs
+from scatterbay.geometry.enclosure import SOLID, Crossings, Enclosure
+from scatterbay.physics import dose
+
+Array = NDArray[np.float64]
+Ints = NDArray[np.int64]
+
+COSINES = 48
+MOST_CROSSED = 6
+"""More faces than this on one ray are refused rather than cut short."""
+
+Crossing = tuple[int, bool, int]
+"""Face number, outward or not, and mask of make-ups the ray may meet."""
+Signature = tuple[Crossing, ...]
+"""The faces a ray crosses, in order."""
+
+
+@dataclass(frozen=True)
+class Behind:
+    """ln dose per unit fluence behind one signature, on a mesh: values (q, cosines, rungs)."""
+
+    inverse_cosines: Array
+    values: Array
+
+    def log_dose(self, rungs: Rungs, cosines: Array) -> Array:
+        """(q, n) for energies (n,) and cosines (n,): linear in 1/cos and in ln E between mesh points.
+
+        Rays more grazing than the most grazing mesh point (88 degrees) take its value, which is higher.
+        """
+        inverse = np.minimum(1.0 / cosines, self.inverse_cosines[-1])
+        row = np.minimum(np.searchsorted(self.inverse_cosines, inverse, side="right") - 1, COSINES - 2)
+        low = self.inverse_cosines[row]
+        share = (inverse - low) / (self.inverse_cosines[row + 1] - low)
+        first, last = self._at(row, rungs), self._at(row + 1, rungs)
+        return first + share * (last - first)  # type: ignore[no-any-return]
+
+    def _at(self, row: Ints, rungs: Rungs) -> Array:
+        columns = self.values.shape[-1]
+        flat = self.values.reshape(self.values.shape[0], -1)
+        position = row * columns + rungs.index
+        low = flat.take(position, axis=1)
+        return low + rungs.share * (flat.take(position + 1, axis=1) - low)  # type: ignore[no-any-return]
+
+
+@dataclass
+class Walls:
+    """Faces, their make-ups as sheets from the inside (of a screen: its left) outwards, and answers kept.
+
+    ``make_ups``: by face number, the face's own sheets. ``holes``: by face number, the sheets of each hole in
+    the order of ``enclosure.holes``. Empty sheets stand for an open face.
+    """
+
+    enclosure: Enclosure
+    make_ups: Sequence[Sheets]
+    holes: dict[int, tuple[Sheets, ...]]
+    ladder: Ladder
+    _behind: dict[Signature, Behind] = field(default_factory=dict)
+    _free: Array | None = None
+
+    def free_log_dose(self, rungs: Rungs) -> Array:
+        """ln dose per unit fluence with nothing in the way, (q, n)."""
+        if self._free is None:
+            self._free = np.log(dose.per_fluence(self.ladder.energy_kev))
+        return rungs.of(self._free)
+
+    def options(self, signature: Signature) -> list[Sheets]:
+        """Every make-up that a ray of this signature may have met, as one stack of sheets each."""
+        choices = []
+        for face, outward, mask in signature:
+            stacks = [self.make_ups[face]] if mask & SOLID else []
+            for k, sheets in enumerate(self.holes.get(face, ())):
+                if mask & (SOLID << (k + 1)):
+                    stacks.append(sheets)
+            choices.append([stack if outward else stack[::-1] for stack in stacks])
+        return [tuple(itertools.chain(*combination)) for combination in itertools.product(*choices)]
+
+    def answers(self, signature: Signature) -> list[Answer]:
+        """The answers of those make-ups that hold anything."""
+        return [answer(sheets) for sheets in self.options(signature) if sheets]
+
+    def behind(self, signature: Signature) -> Behind:
+        """The mesh of a signature; where a ray may meet several make-ups, the one that lets most through."""
+        if signature not in self._behind:
+            self._behind[signature] = self._mesh(signature)
+        return self._behind[signature]
+
+    def _mesh(self, signature: Signature) -> Behind:
+        options = self.options(signature)
+        energy = self.ladder.energy_kev
+        least = answer(next(s for s in options if s)).cosines[0] if any(options) else 0.03
+        cosines = np.exp(np.linspace(0.0, np.log(least), COSINES))
+        cosines[-1] = least
+        layers = []
+        for sheets in options:
+            if sheets:
+                layers.append(answer(sheets).log_dose(energy, cosines).transpose(0, 2, 1))
+            else:
+                free = np.log(dose.per_fluence(energy))
+                layers.append(np.broadcast_to(free[:, None, :], (free.shape[0], COSINES, free.shape[1])))
+        return Behind(1.0 / cosines, np.ascontiguousarray(np.maximum.reduce(layers)))
+
+    def log_dose(self, start: Array, end: Array, rungs: Rungs) -> Array:
+        """ln dose at the end of rays per unit fluence that would be there without walls, (q, n).
+
+        start (n, 3), end (3,) or (n, 3) [m]; energies at the start.
+        """
+        met = self.enclosure.crossings(start, end)
+        result = np.empty((len(dose.QUANTITIES), len(start)))
+        for signature, rays in self.sorted_by_signature(met):
+            at = rungs.some(rays)
+            if not signature:
+                result[:, rays] = self.free_log_dose(at)
+                continue
+            faces = [crossing[0] for crossing in signature]
+            cosine = met.cosine[faces][:, rays].max(axis=0)
+            result[:, rays] = self.behind(signature).log_dose(at, cosine)
+        return result
+
+    def sorted_by_signature(self, met: Crossings) -> list[tuple[Signature, Ints]]:
+        """The rays of each signature that occurs."""
+        hit = np.isfinite(met.at)
+        faces = np.flatnonzero(hit.any(axis=1))
+        count = met.at.shape[1]
+        if not faces.size:
+            return [((), np.arange(count))]
+        codes = self._codes(met, hit, faces)
+        result = []
+        for column in np.unique(codes, axis=1).T:
+            rays = np.flatnonzero((codes == column[:, None]).all(axis=0))
+            result.append((tuple(_decoded(code) for code in column if code >= 0), rays))
+        return result
+
+    def _codes(self, met: Crossings, hit: NDArray[np.bool_], faces: Ints) -> Ints:
+        """Crossings in order along each ray as numbers, shape (k, n), -1 where there are no more."""
+        at, some = met.at[faces], hit[faces]
+        code = (faces[:, None] * 2 + met.outward[faces]) * 2**16 + met.mask[faces]
+        code = np.where(some, code, -1)
+        if (some.sum(axis=0) > 1).any():
+            order = np.argsort(at, axis=0, kind="stable")
+            code = np.take_along_axis(code, order, axis=0)
+        else:
+            code = code.max(axis=0, keepdims=True)
+        if len(code) > MOST_CROSSED and (code[MOST_CROSSED:] >= 0).any():
+            raise ValueError(f"a ray crosses more than {MOST_CROSSED} faces")
+        return code
+
+
+def _decoded(code: int) -> Crossing:
+    face, mask = divmod(int(code), 2**16)
+    return face // 2, bool(face % 2), mask

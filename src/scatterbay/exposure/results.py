@@ -1,0 +1,113 @@
+"""An assessment as plain records: what every report is made from."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from scatterbay.scenario.parts import Assumption
+
+TIME_BASES = ("rate", "hour", "day", "week", "year")
+"""Instantaneous rate; dose in the worst hour; rate averaged over the worst 8 h; dose in a week; in a year."""
+
+BELOW, ABOVE, CLOSE, NO_GOAL = "below", "above", "too close to call", "no goal"
+
+
+@dataclass(frozen=True)
+class Figure:
+    """A value of one quantity over one time base, in base units (Gy or Sv; per second for rate and day).
+
+    ``low`` and ``high``: the band of the model allowance and two standard errors.
+    """
+
+    time_base: str
+    quantity: str
+    value: float
+    standard_error: float
+    low: float
+    high: float
+
+
+@dataclass(frozen=True)
+class PathShare:
+    """One path's instantaneous rate while its beam is on [Gy/s, Sv/s]; ``bound`` marks a plane bound, not added."""
+
+    beam: str
+    path: str
+    order: int
+    rate: dict[str, float]
+    standard_error: dict[str, float]
+    bound: bool = False
+
+
+@dataclass(frozen=True)
+class GoalResult:
+    """A design goal beside the figure of its own quantity and time base."""
+
+    text: str
+    figure: Figure
+    goal: float
+    verdict: str
+
+    @property
+    def fraction(self) -> float:
+        """Figure over goal."""
+        return self.figure.value / self.goal
+
+
+@dataclass(frozen=True)
+class Factors:
+    """The multiplications behind a place's figures, one entry per beam: seconds on, use factor, weeks."""
+
+    beam: str
+    seconds: dict[str, float]
+    use_factor: float
+    weeks: float
+
+
+@dataclass(frozen=True)
+class PlaceResult:
+    """Everything about one place."""
+
+    name: str
+    at: tuple[float, float, float]
+    how: str
+    people: str
+    area: str
+    occupancy: float
+    quantity: str
+    """The quantity its figures are shown in first."""
+    figures: dict[tuple[str, str], Figure]
+    """By (time base, quantity)."""
+    goals: tuple[GoalResult, ...]
+    verdict: str
+    reasons: tuple[str, ...]
+    """Why the verdict is not what the figures alone would give."""
+    paths: tuple[PathShare, ...]
+    single_scatter: dict[str, float]
+    """Rate of single scatter alone, by quantity."""
+    all_scatter: dict[str, float]
+    factors: tuple[Factors, ...]
+    behind: str
+
+    def figure(self, time_base: str) -> Figure:
+        """The figure of a time base in the place's own quantity."""
+        return self.figures[time_base, self.quantity]
+
+
+@dataclass(frozen=True)
+class Assessment:
+    """A whole bay, assessed."""
+
+    title: str
+    drawing: str
+    path: str
+    sha256: str
+    seed: int
+    places: tuple[PlaceResult, ...]
+    assumptions: tuple[Assumption, ...]
+
+    @property
+    def worst(self) -> str:
+        """The worst verdict of all places."""
+        order = (ABOVE, CLOSE, NO_GOAL, BELOW)
+        return min((place.verdict for place in self.places), key=order.index, default=NO_GOAL)

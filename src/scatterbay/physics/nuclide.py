@@ -1,0 +1,46 @@
+"""Spectra of sealed sources, and their decay."""
+
+from __future__ import annotations
+
+import math
+
+import numpy as np
+
+from scatterbay.errors import OutOfRangeError
+from scatterbay.physics.spectrum import Spectrum
+from scatterbay.tables.nuclides import Nuclide
+
+WEAKEST = 1e-6
+"""Lines below this share of the photons' energy are left out."""
+
+
+def nuclide_spectrum(nuclide: Nuclide) -> Spectrum:
+    """Photon lines per steradian and decay, evenly in all directions, from 20 keV up.
+
+    Left out: lines below 20 keV (stopped in the capsule), bremsstrahlung of beta rays, absorption in the source
+    and its capsule, and lines that carry less than 1e-6 of the energy.
+    """
+    carried = nuclide.lines_kev * nuclide.per_decay
+    kept = carried > WEAKEST * carried.sum()
+    order = np.argsort(nuclide.lines_kev[kept])
+    photons = nuclide.per_decay[kept][order] / (4.0 * math.pi)
+    return Spectrum(nuclide.lines_kev[kept][order], photons, "decay")
+
+
+def decayed(activity: float, half_life: float, elapsed: float) -> float:
+    """Activity after a time: A exp(-ln 2 t / T) [Bq], half-life and time in s.
+
+    Raises
+    ------
+    OutOfRangeError : the time is negative, which would make a source stronger than it was stated to be.
+    """
+    if elapsed < 0.0:
+        raise OutOfRangeError("the date assessed lies before the date of the stated activity")
+    return activity * math.exp(-math.log(2.0) * elapsed / half_life)
+
+
+def air_kerma_rate_constant(nuclide: Nuclide, lowest_kev: float = 20.0) -> float:
+    """Air kerma rate constant [Gy m2 / (Bq s)] of the lines from ``lowest_kev`` up."""
+    spectrum = nuclide_spectrum(nuclide)
+    kept = spectrum.energy_kev >= lowest_kev
+    return Spectrum(spectrum.energy_kev[kept], spectrum.photons[kept], "decay").kerma_at_1_m
