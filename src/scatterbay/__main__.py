@@ -1,0 +1,5 @@
+"""`python -m scatterbay`."""
+
+from scatterbay.cli.main import run
+
+run()

@@ -1,0 +1,1 @@
+"""Renders results: terminal, JSON, CSV, tables. Computes nothing."""

@@ -1,0 +1,61 @@
+"""Words and units in which results are printed, the same in every report."""
+
+from __future__ import annotations
+
+from scatterbay.exposure.results import Figure, PathShare
+from scatterbay.physics import dose
+from scatterbay.units import choose_unit, factor_of, format_quantity, significant
+
+SYMBOLS = {dose.AIR_KERMA: "air kerma", dose.AMBIENT: "H*(10)"}
+
+BASES = {
+    "rate": "while beam is on",
+    "hour": "worst hour",
+    "day": "worst 8 h, average",
+    "week": "week",
+    "year": "year",
+}
+
+_PER_HOUR, _MICRO = 3600.0, 1e6
+
+
+def unit(time_base: str, quantity: str) -> str:
+    """The fixed unit of a time base in machine-readable output: micro-units, per hour for rates."""
+    symbol = f"u{dose.UNITS[quantity]}"
+    return {"rate": f"{symbol}/h", "hour": symbol, "day": f"{symbol}/h", "week": f"{symbol}/week"}.get(
+        time_base, f"{symbol}/year"
+    )
+
+
+def in_unit(value: float, time_base: str) -> float:
+    """A base value (Gy, Sv, per second for rates) in that unit."""
+    return value * _MICRO * (_PER_HOUR if time_base in ("rate", "day") else 1.0)
+
+
+def kind(time_base: str, quantity: str) -> str:
+    """The kind of quantity that a figure of this time base is."""
+    suffix = {"rate": " rate", "day": " rate", "hour": "", "week": " per week", "year": " per year"}[time_base]
+    return quantity + suffix
+
+
+def spoken(value: float, time_base: str, quantity: str) -> str:
+    """A base value with a unit that suits its size, two significant digits."""
+    return format_quantity(value, kind(time_base, quantity))
+
+
+def band(figure: Figure) -> str:
+    """The band of a figure, low to high, in the unit the figure is spoken in."""
+    factor = factor_of(choose_unit(figure.value, kind(figure.time_base, figure.quantity)))
+    return f"{significant(figure.low / factor)} to {significant(figure.high / factor)}"
+
+
+def path_words(share: PathShare) -> str:
+    """What a path is, in words."""
+    order = {1: ", single", 2: ", two and more"}.get(share.order, "")
+    return f"{share.path}{order}"
+
+
+def percent(part: float, whole: float) -> str:
+    """A share as a percentage with two digits where it is small."""
+    share = 100.0 * part / whole if whole > 0.0 else 0.0
+    return f"{share:.0f} %" if share >= 9.5 else f"{share:.2g} %"
