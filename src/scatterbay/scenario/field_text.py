@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 import re
 
+from scatterbay.scenario.known import FARTHEST
 from scatterbay.scenario.parts import Field
 from scatterbay.units import TextError, read
 from scatterbay.units.expression import plain
@@ -66,6 +67,8 @@ def _above_zero(text: str, start: int) -> float:
         value = read(text, "length").value
     except TextError as problem:
         raise problem.moved(start) from None
-    if value <= 0.0:
-        raise TextError(f"'{text}': a length in a field must be above zero", _FORMS, start)
+    if not 0.0 < value <= FARTHEST:
+        raise TextError(
+            f"'{text}': a length in a field is above zero and up to {FARTHEST:g} m", _FORMS, start
+        )
     return value

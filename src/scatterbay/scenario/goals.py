@@ -50,7 +50,8 @@ def _goal(base: str, amount: str, text: str, kinds: list[str]) -> Goal:
     try:
         found = read(amount, *kinds)
     except TextError as problem:
-        hint = _FORMS if "for example" in problem.hint else problem.hint
+        why, example, _ = problem.hint.partition("for example")
+        hint = why + _FORMS if example else problem.hint
         raise TextError(problem.message, hint, problem.start) from None
     if found.value <= 0.0:
         raise TextError(f"'{text}': a goal must be above zero", _FORMS)

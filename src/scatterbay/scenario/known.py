@@ -9,6 +9,10 @@ TUBE_KV = (40.0, 450.0)
 """Tube voltages the spectrum model covers [kV]."""
 
 
+FARTHEST = 200.0
+"""Longest length and farthest coordinate that are believed [m]; more is a slip of the unit."""
+
+
 def shipped_names() -> tuple[str, ...]:
     """Names of the shipped materials."""
     from scatterbay.tables import materials

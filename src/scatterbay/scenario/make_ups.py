@@ -13,6 +13,7 @@ from scatterbay.units.expression import plain
 THICKEST = 5.0
 """Thickest layer that is believed [m]; more is a slip of the unit."""
 
+_STARTS_NUMBER = frozenset("+-.0123456789")
 _PLUS = re.compile(r"(?<![0-9][eE])\+(?!\s*/?\s*-)")
 _LAYER = re.compile(r"(?P<name>\D*?)\s*(?P<amount>[-+]?[.\d].*)", re.ASCII | re.DOTALL)
 _THICKNESS_FIRST = re.compile(
@@ -94,7 +95,7 @@ def _split(part: str, materials: Collection[str]) -> tuple[str, str, int]:
     """Material, thickness text, and where that text starts. Defined names may hold digits."""
     for known in sorted(materials, key=len, reverse=True):
         rest = part[len(known) :]
-        if part.startswith(known) and rest[:1].isspace() and rest.strip():
+        if part.startswith(known) and rest[:1].isspace() and rest.strip()[:1] in _STARTS_NUMBER:
             return known, rest.strip(), len(part) - len(rest.lstrip())
     turned = _THICKNESS_FIRST.fullmatch(part)
     if turned:

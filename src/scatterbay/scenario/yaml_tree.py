@@ -53,7 +53,7 @@ class Tree:
             if found:
                 return found
             path, key = path[:-1], True
-        return Spot(0, 0)
+        return self.values.get((), Spot(0, 0))
 
 
 def dotted(path: Path) -> str:

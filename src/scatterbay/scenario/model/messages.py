@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Mapping
 from typing import Any
 
 from pydantic_core import ErrorDetails
@@ -18,19 +18,22 @@ _TAGS = ("(side)", "(flat)", "(tube)", "(sealed)", *(f"({shape})" for shape in S
 _NOT_A_MAPPING = ("model_type", "model_attributes_type", "dict_type")
 
 
-def problems_of(errors: list[ErrorDetails], tree: Tree) -> Iterator[tuple[Problem, Path, str]]:
-    """Each problem, the path it stands at, and pydantic's word for it."""
+def problems_of(errors: list[ErrorDetails], tree: Tree) -> list[tuple[Problem | None, Path, str]]:
+    """Each problem (None for one that says nothing new), its path, and pydantic's word for it."""
+    found: list[tuple[Problem | None, Path, str]] = []
     unknown = {_path(error) for error in errors if error["type"] == "extra_forbidden"}
     for error in errors:
         path = _path(error)
         kind = error["type"]
         if kind == "missing" and _misspelt(path, unknown):
-            yield Problem("", ""), path, "misspelt"
+            found.append((None, path, kind))
             continue
         for inside, problem in _text_problems(error, path, tree):
             whole = (*path, *inside)
             on_key = kind in ("missing", "extra_forbidden")
-            yield place(tree, whole[:-1] if kind == "missing" else whole, problem, on_key), path, kind
+            spot = whole[:-1] if kind == "missing" else whole
+            found.append((place(tree, spot, problem, on_key), path, kind))
+    return found
 
 
 def place(tree: Tree, path: Path, problem: TextError, on_key: bool = False) -> Problem:

@@ -30,7 +30,7 @@ def read_document(tree: Tree) -> tuple[Document | None, list[Problem]]:
             return Document.model_validate(tree.data, context=names), problems
         except ValidationError as failure:
             for problem, path, kind in problems_of(failure.errors(include_url=False), tree):
-                problems += [problem] if problem.message else []
+                problems += [problem] if problem else []
                 _set_aside(tree.data, path, kind)
     raise AssertionError("a scenario did not settle although its broken entries were set aside")
 

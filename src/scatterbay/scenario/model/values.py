@@ -6,12 +6,10 @@ import math
 from collections.abc import Callable
 from datetime import date
 
+from scatterbay.scenario.known import FARTHEST
 from scatterbay.scenario.model.base import Names, each
 from scatterbay.scenario.yaml_tree import Data
 from scatterbay.units import KINDS, Quantity, TextError, read, read_number
-
-FARTHEST = 200.0
-"""Farthest coordinate that is believed [m]; more is a slip of the unit."""
 
 Reader = Callable[[Data, Names], object]
 Point2 = tuple[float, float]
@@ -67,6 +65,8 @@ def quantity(
             raise TextError(f"'{found.text}' must {'not be negative' if lowest_allowed else 'be above zero'}")
         if lowest == 0.0 and found.tolerance >= found.value > 0.0:
             raise TextError(f"'{found.text}': the tolerance is as large as the value", "check its unit")
+        if found.kind == "length" and found.value > FARTHEST:
+            raise TextError(f"'{found.text}' is longer than any bay ({FARTHEST:g} m)", "check its unit")
         if check:
             check(found)
         return found
