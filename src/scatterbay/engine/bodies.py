@@ -56,25 +56,34 @@ class Bodies:
         """Numbers of the outermost parts."""
         return [k for k, part in enumerate(self.parts) if part.parent is None]
 
-    def depth(self, start: Array, ray: Array, length: Array, rungs: Rungs, leave_out: int | None = None) -> Array:
+    def depth(
+        self, start: Array, ray: Array, length: Array, rungs: Rungs, leave_out: int | None = None
+    ) -> Array:
         """Optical depth from start (n, 3) along the ray (n, 3) to its end, shape (n,).
 
         ``leave_out``: number of a group that is not counted.
         """
         total = np.zeros(len(start))
+        for excess, rays, inside in self.on_the_way(start, ray, length, leave_out):
+            total[rays] += rungs.some(rays).of(excess) * inside
+        return total
+
+    def on_the_way(
+        self, start: Array, ray: Array, length: Array, leave_out: int | None = None
+    ) -> list[tuple[Array, Ints, Array]]:
+        """What rays meet before their end: per part, its attenuation over its surroundings on the ladder [1/m],
+        the numbers of the rays that meet it, and how far they run in it [m]."""
+        found = []
         for part in self.parts:
-            if part.group == leave_out:
+            excess = self._excess(part)
+            if part.group == leave_out or excess is None:
                 continue
             near, far = part.solid.chord(start, ray)
             inside = np.minimum(far, 1.0) - np.maximum(near, 0.0)
             hit = np.flatnonzero(inside > 0.0)
-            if not hit.size:
-                continue
-            excess = self._excess(part)
-            if excess is not None:
-                at = rungs.some(hit)
-                total[hit] += at.of(excess) * inside[hit] * length[hit]
-        return total
+            if hit.size:
+                found.append((excess, hit, inside[hit] * length[hit]))
+        return found
 
     def _excess(self, part: Part) -> Array | None:
         """Attenuation of a part over its surroundings on the ladder [1/m]; None where they are the same."""

@@ -7,19 +7,26 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
-from scatterbay.engine.arrive import dose_from_emitters, dose_from_points
+from scatterbay.engine.arrive import dose_from_emitters, dose_from_points, ready
 from scatterbay.engine.first import first_collisions
 from scatterbay.engine.points import ScatterPoints
-from scatterbay.engine.primary import PrimaryBeam, lit_patches, primary_at
+from scatterbay.engine.primary import PrimaryBeam, lit_patches, primary_at, without_bodies
 from scatterbay.engine.scene import Scene, SceneBeam
 from scatterbay.engine.sequence import generator
 from scatterbay.engine.walk import Balance, walk_on
+from scatterbay.physics import dose
+from scatterbay.physics.compton import scattered_energy
+from scatterbay.physics.slab.grid import LOWEST_KEV
 
 Array = NDArray[np.float64]
 
 REPLICATES = 16
 FIRST_PER_REPLICATE = 512
 WALKS_PER_REPLICATE = 256
+MOST_BATCHES = 12
+WANTED_ERROR = 0.02
+"""Batches of points are added until the standard error of the scatter of a beam is below this share of all that
+arrives from the beam, at every place, or until there are MOST_BATCHES."""
 
 PRIMARY, SCATTER, LEAKAGE = "primary", "scatter", "leakage"
 PLANE_BOUND = "primary as a plane"
@@ -56,13 +63,14 @@ def contributions(scene: Scene) -> Contributions:
     rows: list[Contribution] = []
     balances = {}
     for number, beam in enumerate(scene.beams):
-        points, balances[beam.name] = scatter_points(scene, number)
-        rows += _primary_rows(scene, beam) + _scatter_rows(scene, beam, points) + _leakage_rows(scene, beam)
+        steady = _primary_rows(scene, beam) + _leakage_rows(scene, beam)
+        scattered, balances[beam.name] = _scatter_rows(scene, number, steady)
+        rows += steady + scattered
     return Contributions(tuple(rows), balances, {beam.name: beam.drive for beam in scene.beams})
 
 
-def scatter_points(scene: Scene, number: int) -> tuple[ScatterPoints, Balance]:
-    """Scatter points of all orders of one beam, and where their energy went.
+def scatter_points(scene: Scene, number: int, batch: int = 0) -> tuple[ScatterPoints, Balance]:
+    """Scatter points of all orders of one beam, and where their energy went: one batch.
 
     Walks start from the first half of each replicate's first collisions; their weights make up for it, since
     weights are per replicate.
@@ -70,33 +78,87 @@ def scatter_points(scene: Scene, number: int) -> tuple[ScatterPoints, Balance]:
     beam, around = scene.beams[number], scene.around
     parts, balance = [], Balance()
     for group in around.bodies.groups:
-        common = (beam.origin, beam.field, beam.spectrum, around.bodies, group, around.ladder)
-        stream = (scene.seed, number, group)
+        importance = _importance(scene, beam, group)
+        common = (beam.origin, beam.field, beam.spectrum, importance, around.bodies, group, around.ladder)
+        stream = (scene.seed, number, group, batch)
         first = first_collisions(*common, FIRST_PER_REPLICATE, REPLICATES, stream)
         if not len(first):
             continue
         starts = first_collisions(*common, WALKS_PER_REPLICATE, REPLICATES, stream)
         walk = walk_on(starts, around.bodies, around.ladder, generator(*stream, 1))
         parts += [first, walk.points]
-        balance.entered += walk.balance.entered
-        balance.absorbed += walk.balance.absorbed
-        balance.escaped += walk.balance.escaped
-        balance.cut_off += walk.balance.cut_off
+        balance.add(walk.balance)
     return ScatterPoints.joined(parts) if parts else ScatterPoints.none(), balance
 
 
-def _scatter_rows(scene: Scene, beam: SceneBeam, points: ScatterPoints) -> list[Contribution]:
-    if not len(points):
-        return []
+def _scatter_rows(
+    scene: Scene, number: int, steady: list[Contribution]
+) -> tuple[list[Contribution], Balance]:
+    """Single and higher scatter at every place, from as many batches as the errors ask for."""
+    name, places = scene.beams[number].name, scene.places
+    other = np.zeros((len(places), len(dose.QUANTITIES)))
+    for row in steady:
+        if row.path != PLANE_BOUND:
+            other[[p.name for p in places].index(row.place)] += row.values[0]
+    sums, balance = np.zeros((len(places), 2 * REPLICATES, len(dose.QUANTITIES))), Balance()
+    for batch in range(MOST_BATCHES):
+        points, counted = scatter_points(scene, number, batch)
+        if not len(points):
+            return [], balance
+        balance.add(counted)
+        sums += _by_replicate(points, scene)
+        if _precise(sums / (batch + 1), other):
+            break
+    sums /= batch + 1
     rows = []
-    higher = points.order >= HIGHER
-    group = points.replicate + REPLICATES * higher
+    for place, values in zip(places, sums, strict=True):
+        rows.append(Contribution(place.name, name, SCATTER, 1, values[:REPLICATES]))
+        rows.append(Contribution(place.name, name, SCATTER, HIGHER, values[REPLICATES:]))
+    return rows, balance
+
+
+def _by_replicate(points: ScatterPoints, scene: Scene) -> Array:
+    """Dose at every place by replicate, single scatter first, then higher orders: (places, 2 replicates, q)."""
+    group = points.replicate + REPLICATES * (points.order >= HIGHER)
+    readied = ready(points, scene.around)
+    return np.array(
+        [
+            [
+                np.bincount(group, weights=row, minlength=2 * REPLICATES)
+                for row in dose_from_points(readied, place.at, scene.around)
+            ]
+            for place in scene.places
+        ]
+    ).transpose(0, 2, 1)
+
+
+def _precise(sums: Array, other: Array) -> bool:
+    """Is the standard error of the scatter small beside all that arrives, at every place?"""
+    whole = sums[:, :REPLICATES] + sums[:, REPLICATES:]
+    error = whole.std(axis=1, ddof=1) / np.sqrt(REPLICATES)
+    return bool((error <= WANTED_ERROR * (whole.mean(axis=1) + other)).all())
+
+
+def _importance(scene: Scene, beam: SceneBeam, group: int) -> Array:
+    """Chance of drawing each energy: what it gives to each place when scattered in the group's middle, shared
+    evenly among the places; evenly spread over the kerma where there is no place."""
+    around = without_bodies(scene.around)
+    energy, photons = beam.spectrum.energy_kev, beam.spectrum.photons
+    middle = scene.around.bodies.parts[group].solid.centre
+    arriving = middle - beam.origin
+    chances = []
     for place in scene.places:
-        dose = dose_from_points(points, place.at, scene.around)
-        sums = np.stack([np.bincount(group, weights=row, minlength=2 * REPLICATES) for row in dose], axis=1)
-        rows.append(Contribution(place.name, beam.name, SCATTER, 1, sums[:REPLICATES]))
-        rows.append(Contribution(place.name, beam.name, SCATTER, HIGHER, sums[REPLICATES:]))
-    return rows
+        ray = place.at - middle
+        norm = float(np.linalg.norm(ray) * np.linalg.norm(arriving))
+        cosine = float(ray @ arriving) / norm if norm > 0.0 else 0.0
+        after = np.maximum(scattered_energy(energy, np.full(energy.size, cosine)), LOWEST_KEV)
+        given = (
+            photons
+            * dose_from_emitters(np.repeat(middle[None, :], energy.size, axis=0), after, place.at, around)[-1]
+        )
+        if given.sum() > 0.0:
+            chances.append(given / given.sum())
+    return np.mean(chances, axis=0) if chances else photons / photons.sum()
 
 
 def _primary_rows(scene: Scene, beam: SceneBeam) -> list[Contribution]:
@@ -119,11 +181,11 @@ def _leakage_rows(scene: Scene, beam: SceneBeam) -> list[Contribution]:
     start = np.repeat(beam.origin[None, :], spectrum.energy_kev.size, axis=0)
     rows = []
     for place in scene.places:
-        dose = dose_from_emitters(start, spectrum.energy_kev, place.at, scene.around) @ spectrum.photons
-        rows.append(Contribution(place.name, beam.name, LEAKAGE, 0, _steady(dose)))
+        given = dose_from_emitters(start, spectrum.energy_kev, place.at, scene.around) @ spectrum.photons
+        rows.append(Contribution(place.name, beam.name, LEAKAGE, 0, _steady(given)))
     return rows
 
 
-def _steady(dose: Array) -> Array:
-    """A value without statistics, once per replicate."""
-    return np.repeat(dose[None, :], REPLICATES, axis=0)
+def _steady(value: Array) -> Array:
+    """A value without statistics (q,), once per replicate."""
+    return np.repeat(value[None, :], REPLICATES, axis=0)

@@ -28,8 +28,12 @@ class Rungs:
 
     def of(self, values: Array) -> Array:
         """A table over the ladder, shape (..., rungs), read at these energies: (..., n)."""
-        low = values[..., self.index]
-        return low + self.share * (values[..., self.index + 1] - low)  # type: ignore[no-any-return]
+        low = values.take(self.index, axis=-1)
+        high = values.take(self.index + 1, axis=-1)
+        high -= low
+        high *= self.share
+        high += low
+        return high
 
     def some(self, chosen: NDArray[np.bool_] | Ints) -> Rungs:
         """The rungs of some of the energies."""

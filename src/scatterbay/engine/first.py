@@ -14,14 +14,18 @@ from scatterbay.physics.spectrum import Spectrum
 
 Array = NDArray[np.float64]
 
-UNIFORM_SHARE = 0.5
-"""Share of depths drawn evenly over the optical depth; the rest follow the beam's own weakening."""
+STEEPNESS = (0.0, 1.0, 3.0)
+"""Depths are drawn from a mixture of exp(-s tau) with these s, in equal parts: evenly, as the beam weakens, and
+near the surface, where what is scattered back comes from."""
+BY_NUMBER = 0.4
+"""Share of energies drawn by the number of photons; the rest by what they may do at the places."""
 
 
 def first_collisions(
     origin: Array,
     field: BeamField,
     spectrum: Spectrum,
+    importance: Array,
     bodies: Bodies,
     group: int,
     ladder: Ladder,
@@ -36,6 +40,7 @@ def first_collisions(
     origin : where the source stands (3,) [m].
     field : directions the beam goes.
     spectrum : photons per steradian and unit of output.
+    importance : chance of drawing each energy of the spectrum for what it may do at the places, (e,), sums to 1.
     bodies : all bodies; those in front of the group weaken the beam.
     group : number of the group's outermost part.
     ladder : energies of the tables.
@@ -46,7 +51,7 @@ def first_collisions(
     uniform = np.concatenate([spread_points(per_replicate, 4, random.random(4)) for _ in range(replicates)])
     replicate = np.repeat(np.arange(replicates), per_replicate)
     direction, solid_angle = _towards(origin, field, bodies, group, uniform[:, :2])
-    energy, photons = _draw_energies(spectrum, uniform[:, 3])
+    energy, photons = _draw_energies(spectrum, importance, uniform[:, 3])
     rungs = ladder.rungs(energy)
     start, unit = np.broadcast_to(origin, direction.shape), np.ones(len(direction))
     track = bodies.track(start, direction, group)
@@ -70,7 +75,9 @@ def first_collisions(
     return points.some(hit)
 
 
-def _towards(origin: Array, field: BeamField, bodies: Bodies, group: int, uniform: Array) -> tuple[Array, Array]:
+def _towards(
+    origin: Array, field: BeamField, bodies: Bodies, group: int, uniform: Array
+) -> tuple[Array, Array]:
     """Directions over the field, or over the cone that holds the group if that is the narrower of the two."""
     surface = bodies.parts[group].solid.surface() - origin
     middle = bodies.parts[group].solid.centre - origin
@@ -86,15 +93,9 @@ def _towards(origin: Array, field: BeamField, bodies: Bodies, group: int, unifor
     return field.sample(uniform)
 
 
-def _draw_energies(spectrum: Spectrum, uniform: Array) -> tuple[Array, Array]:
-    """Energies (n,) and the photons per steradian that each stands for.
-
-    Half are drawn by the number of photons, half by photons times energy squared: what passes a barrier is the
-    upper end of the spectrum.
-    """
-    by_number = spectrum.photons / spectrum.photons.sum()
-    by_energy = spectrum.photons * spectrum.energy_kev**2
-    chance = 0.5 * by_number + 0.5 * by_energy / by_energy.sum()
+def _draw_energies(spectrum: Spectrum, importance: Array, uniform: Array) -> tuple[Array, Array]:
+    """Energies (n,) and the photons per steradian that each stands for."""
+    chance = BY_NUMBER * spectrum.photons / spectrum.photons.sum() + (1.0 - BY_NUMBER) * importance
     drawn = np.minimum(np.searchsorted(np.cumsum(chance), uniform), chance.size - 1)
     return spectrum.energy_kev[drawn], spectrum.photons[drawn] / chance[drawn]
 
@@ -102,9 +103,26 @@ def _draw_energies(spectrum: Spectrum, uniform: Array) -> tuple[Array, Array]:
 def _draw_depths(total: Array, uniform: Array) -> tuple[Array, Array]:
     """Optical depths (n,) below ``total``, and the density they were drawn with."""
     safe = np.maximum(total, 1e-300)
-    even = uniform < UNIFORM_SHARE
-    chosen = np.where(even, uniform / UNIFORM_SHARE, (uniform - UNIFORM_SHARE) / (1.0 - UNIFORM_SHARE))
-    stopped = -np.expm1(-safe)
-    depth = np.where(even, chosen * safe, -np.log1p(-chosen * stopped))
-    density = UNIFORM_SHARE / safe + (1.0 - UNIFORM_SHARE) * np.exp(-depth) / stopped
-    return np.minimum(depth, safe), density
+    kinds = len(STEEPNESS)
+    kind = np.minimum((uniform * kinds).astype(np.int64), kinds - 1)
+    chosen = uniform * kinds - kind
+    depth = np.empty(len(safe))
+    for k, steep in enumerate(STEEPNESS):
+        mine = kind == k
+        depth[mine] = _inverse(steep, safe[mine], chosen[mine])
+    density = sum(_density(steep, safe, depth) for steep in STEEPNESS) / kinds
+    return np.minimum(depth, safe), np.asarray(density)
+
+
+def _inverse(steep: float, total: Array, chosen: Array) -> Array:
+    """Depth that a share ``chosen`` of the truncated exponential law lies below."""
+    if steep == 0.0:
+        return chosen * total
+    return -np.log1p(chosen * np.expm1(-steep * total)) / steep
+
+
+def _density(steep: float, total: Array, depth: Array) -> Array:
+    """Density of the truncated exponential law."""
+    if steep == 0.0:
+        return 1.0 / total
+    return steep * np.exp(-steep * depth) / -np.expm1(-steep * total)  # type: ignore[no-any-return]

@@ -22,7 +22,9 @@ class LeakingHousing:
     spectrum: Spectrum
 
 
-def leaking_housing(bare: Spectrum, drive: float, stated: float, quantity: str, housing: Material) -> LeakingHousing:
+def leaking_housing(
+    bare: Spectrum, drive: float, stated: float, quantity: str, housing: Material
+) -> LeakingHousing:
     """The housing that lets the stated dose rate at 1 m through.
 
     The spectrum behind it is taken as that of a narrow beam, which is harder than what really comes out (the
@@ -60,4 +62,3 @@ def leaking_housing(bare: Spectrum, drive: float, stated: float, quantity: str, 
     thickness = 0.5 * (low + high)
     spectrum = bare.filtered(((housing, thickness),)).thinned()
     return LeakingHousing(housing, thickness, spectrum.scaled(stated / (drive * spectrum.dose_at_1_m()[row])))
-

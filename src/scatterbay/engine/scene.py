@@ -98,7 +98,9 @@ def build_scene(scenario: Scenario) -> Scene:
     closed = all(make_ups[: room.floor + 1]) and all(s for found in holes.values() for s in found)
     looks = [np.array(beam.at) for beam in scenario.beams] + [part.solid.centre for part in bodies.parts]
     places = tuple(
-        ScenePlace(p.name, np.array(p.at), _outside(room, p.at) and closed, _behind(walls, looks, np.array(p.at)))
+        ScenePlace(
+            p.name, np.array(p.at), _outside(room, p.at) and closed, _behind(walls, looks, np.array(p.at))
+        )
         for p in scenario.places
     )
     beams = tuple(_beam(beam, outputs[beam.source], scenario, defined) for beam in scenario.beams)
@@ -135,11 +137,17 @@ def _layers(make_up: MakeUp, defined: Iterable[Material]) -> Sheets:
     return tuple(sheet(layer.material, layer.thickness.value, defined) for layer in make_up.layers)
 
 
-def _sheets(scenario: Scenario, defined: list[Material]) -> tuple[list[Sheets], dict[int, tuple[Sheets, ...]]]:
+def _sheets(
+    scenario: Scenario, defined: list[Material]
+) -> tuple[list[Sheets], dict[int, tuple[Sheets, ...]]]:
     """Sheets by face number, and those of the holes in each face."""
     room = scenario.room
     floor = (sheet(*GROUND),) if room.floor_on_ground else _layers(room.floor, defined)
-    make_ups = [*(_layers(side.make_up, defined) for side in room.sides), _layers(room.ceiling, defined), floor]
+    make_ups = [
+        *(_layers(side.make_up, defined) for side in room.sides),
+        _layers(room.ceiling, defined),
+        floor,
+    ]
     make_ups += [_layers(screen.make_up, defined) for screen in room.screens]
     numbers = _face_numbers(scenario)
     holes: dict[int, tuple[Sheets, ...]] = {}
@@ -197,7 +205,9 @@ def _bodies(scenario: Scenario, defined: list[Material], rungs: Ladder) -> Bodie
         found.append((shapes[0], number(body.material)))
         found += [(inner, number(body.inside)) for inner in shapes[1:]]
     parents = [_parent(k, [solid for solid, _ in found]) for k in range(len(found))]
-    parts = [Part(solid, matter, parents[k], _outermost(k, parents)) for k, (solid, matter) in enumerate(found)]
+    parts = [
+        Part(solid, matter, parents[k], _outermost(k, parents)) for k, (solid, matter) in enumerate(found)
+    ]
     return Bodies(tuple(parts), tuple(matters))
 
 
@@ -206,7 +216,9 @@ def _parent(k: int, shapes: list) -> int | None:  # type: ignore[type-arg]
     around = [j for j, other in enumerate(shapes) if j != k and relation(shapes[k], other) == "inside"]
     if not around:
         return None
-    return next(j for j in around if all(i == j or relation(shapes[j], shapes[i]) == "inside" for i in around))
+    return next(
+        j for j in around if all(i == j or relation(shapes[j], shapes[i]) == "inside" for i in around)
+    )
 
 
 def _outermost(k: int, parents: list[int | None]) -> int:

@@ -100,4 +100,3 @@ def _date(text: str) -> date:
         return date.fromisoformat(text)
     except ValueError:
         raise UsageError(f"'{text}' is not a date like 2031-05-20") from None
-

@@ -35,6 +35,13 @@ class Balance:
     cut_off: float = 0.0
     """Carried by photons that fell below 10 keV, or were still under way when the walk ended."""
 
+    def add(self, other: Balance) -> None:
+        """Add another balance to this one."""
+        self.entered += other.entered
+        self.absorbed += other.absorbed
+        self.escaped += other.escaped
+        self.cut_off += other.cut_off
+
 
 @dataclass
 class Walk:

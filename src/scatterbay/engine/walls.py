@@ -13,6 +13,7 @@ from scatterbay.barriers.answer import Answer
 from scatterbay.barriers.makeup import Sheets
 from scatterbay.barriers.store import answer
 from scatterbay.engine.energies import Ladder, Rungs
+from scatterbay.errors import OutOfRangeError
 from scatterbay.geometry.enclosure import SOLID, Crossings, Enclosure
 from scatterbay.physics import dose
 
@@ -56,6 +57,15 @@ class Behind:
         return low + rungs.share * (flat.take(position + 1, axis=1) - low)  # type: ignore[no-any-return]
 
 
+@dataclass(frozen=True)
+class Way:
+    """Rays of one signature: their numbers, the mesh behind their walls (None: nothing there), their cosines."""
+
+    rays: Ints
+    behind: Behind | None
+    cosine: Array | None
+
+
 @dataclass
 class Walls:
     """Faces, their make-ups as sheets from the inside (of a screen: its left) outwards, and answers kept.
@@ -69,13 +79,6 @@ class Walls:
     holes: dict[int, tuple[Sheets, ...]]
     ladder: Ladder
     _behind: dict[Signature, Behind] = field(default_factory=dict)
-    _free: Array | None = None
-
-    def free_log_dose(self, rungs: Rungs) -> Array:
-        """ln dose per unit fluence with nothing in the way, (q, n)."""
-        if self._free is None:
-            self._free = np.log(dose.per_fluence(self.ladder.energy_kev))
-        return rungs.of(self._free)
 
     def options(self, signature: Signature) -> list[Sheets]:
         """Every make-up that a ray of this signature may have met, as one stack of sheets each."""
@@ -113,22 +116,15 @@ class Walls:
                 layers.append(np.broadcast_to(free[:, None, :], (free.shape[0], COSINES, free.shape[1])))
         return Behind(1.0 / cosines, np.ascontiguousarray(np.maximum.reduce(layers)))
 
-    def log_dose(self, start: Array, end: Array, rungs: Rungs) -> Array:
-        """ln dose at the end of rays per unit fluence that would be there without walls, (q, n).
-
-        start (n, 3), end (3,) or (n, 3) [m]; energies at the start.
-        """
+    def ways(self, start: Array, end: Array) -> list[Way]:
+        """Which walls lie between start (n, 3) and end (3,) or (n, 3) [m], for all rays, by signature."""
         met = self.enclosure.crossings(start, end)
-        result = np.empty((len(dose.QUANTITIES), len(start)))
+        ways = []
         for signature, rays in self.sorted_by_signature(met):
-            at = rungs.some(rays)
-            if not signature:
-                result[:, rays] = self.free_log_dose(at)
-                continue
             faces = [crossing[0] for crossing in signature]
-            cosine = met.cosine[faces][:, rays].max(axis=0)
-            result[:, rays] = self.behind(signature).log_dose(at, cosine)
-        return result
+            cosine = met.cosine[np.ix_(faces, rays)].max(axis=0) if faces else None
+            ways.append(Way(rays, self.behind(signature) if faces else None, cosine))
+        return ways
 
     def sorted_by_signature(self, met: Crossings) -> list[tuple[Signature, Ints]]:
         """The rays of each signature that occurs."""
@@ -138,25 +134,28 @@ class Walls:
         if not faces.size:
             return [((), np.arange(count))]
         codes = self._codes(met, hit, faces)
-        result = []
-        for column in np.unique(codes, axis=1).T:
-            rays = np.flatnonzero((codes == column[:, None]).all(axis=0))
-            result.append((tuple(_decoded(code) for code in column if code >= 0), rays))
+        left, result = np.arange(count), []
+        while left.size:
+            first = codes[:, left[0]]
+            same = (codes[:, left] == first[:, None]).all(axis=0)
+            result.append((tuple(_decoded(code) for code in first if code >= 0), left[same]))
+            left = left[~same]
         return result
 
     def _codes(self, met: Crossings, hit: NDArray[np.bool_], faces: Ints) -> Ints:
         """Crossings in order along each ray as numbers, shape (k, n), -1 where there are no more."""
-        at, some = met.at[faces], hit[faces]
+        some = hit[faces]
         code = (faces[:, None] * 2 + met.outward[faces]) * 2**16 + met.mask[faces]
         code = np.where(some, code, -1)
-        if (some.sum(axis=0) > 1).any():
-            order = np.argsort(at, axis=0, kind="stable")
-            code = np.take_along_axis(code, order, axis=0)
-        else:
-            code = code.max(axis=0, keepdims=True)
-        if len(code) > MOST_CROSSED and (code[MOST_CROSSED:] >= 0).any():
-            raise ValueError(f"a ray crosses more than {MOST_CROSSED} faces")
-        return code
+        crossed = int(some.sum(axis=0).max())
+        if crossed == 1:
+            return code.max(axis=0, keepdims=True)  # type: ignore[no-any-return]
+        if crossed > MOST_CROSSED:
+            raise OutOfRangeError(
+                f"a straight line crosses {crossed} barriers; at most {MOST_CROSSED} are followed"
+            )
+        order = np.argsort(met.at[faces], axis=0, kind="stable")[:crossed]
+        return np.take_along_axis(code, order, axis=0)
 
 
 def _decoded(code: int) -> Crossing:

@@ -8,7 +8,9 @@ from numpy.typing import ArrayLike
 from scatterbay.geometry.solids import Box, Cylinder, Solid, Sphere, perpendicular
 
 
-def solids(shape: str, centre: ArrayLike, sizes: tuple[float, ...], axis: ArrayLike, turned: float) -> list[Solid]:
+def solids(
+    shape: str, centre: ArrayLike, sizes: tuple[float, ...], axis: ArrayLike, turned: float
+) -> list[Solid]:
     """The solids of a body, outermost first: two for a pipe (its outside, and what it encloses), else one.
 
     Parameters
@@ -28,7 +30,10 @@ def solids(shape: str, centre: ArrayLike, sizes: tuple[float, ...], axis: ArrayL
     if shape == "pipe":
         outer, wall, length = sizes
         inner = 0.5 * outer - wall
-        return [Cylinder(middle, along, 0.5 * outer, 0.5 * length), Cylinder(middle, along, inner, 0.5 * length)]
+        return [
+            Cylinder(middle, along, 0.5 * outer, 0.5 * length),
+            Cylinder(middle, along, inner, 0.5 * length),
+        ]
     if shape == "plate":
         one, two = perpendicular(along)
         return [Box(middle, np.stack([one, two, along]), 0.5 * np.array(sizes))]

@@ -141,14 +141,23 @@ class Enclosure:
         return enter, leave
 
     def _cross_sides(
-        self, start: Array, end: Array, ray: Array, length: Array, enter: Array, leave: Array, result: Crossings
+        self,
+        start: Array,
+        end: Array,
+        ray: Array,
+        length: Array,
+        enter: Array,
+        leave: Array,
+        result: Crossings,
     ) -> Array:
         """Fill in the sides; returns where the plan view of each ray meets each side, shape (k, n)."""
         corner, along, normal = self._sides
         left: dict[int, Flags] = {}
         everywhere = np.full((len(corner), len(start)), np.inf)
         for k in range(len(corner)):
-            before, after = (start[:, :2] - corner[k]) @ normal[k], (end[:, :2] - corner[k]) @ normal[k]
+            offset = corner[k] @ normal[k]
+            before = start[:, 0] * normal[k, 0] + start[:, 1] * normal[k, 1] - offset
+            after = end[:, 0] * normal[k, 0] + end[:, 1] * normal[k, 1] - offset
             met = (before < 0.0) != (after < 0.0)
             if not met.any():
                 continue
@@ -162,9 +171,9 @@ class Enclosure:
             result.cosine[k] = np.where(met, np.abs(rate) / length, 1.0)
             result.outward[k] = rate > 0.0
             if self.holes.get(k):
-                offset = np.where(met, at, 0.0)
-                position = start[:, :2] + offset[:, None] * ray[:, :2]
-                first = (position - corner[k]) @ along[k], start[:, 2] + offset * ray[:, 2]
+                reach = np.where(met, at, 0.0)
+                position = start[:, :2] + reach[:, None] * ray[:, :2]
+                first = (position - corner[k]) @ along[k], start[:, 2] + reach * ray[:, 2]
                 slopes = ray[:, :2] @ along[k], ray[:, 2]
                 self._look_into_holes(k, met, first, slopes, rate, result)
         return everywhere
@@ -177,7 +186,14 @@ class Enclosure:
         return known[corner]
 
     def _cross_level(
-        self, face: int, level: float, start: Array, ray: Array, length: Array, side_at: Array, result: Crossings
+        self,
+        face: int,
+        level: float,
+        start: Array,
+        ray: Array,
+        length: Array,
+        side_at: Array,
+        result: Crossings,
     ) -> None:
         """Fill in the ceiling or the floor."""
         before, after = start[:, 2] - level, start[:, 2] + ray[:, 2] - level
@@ -194,7 +210,9 @@ class Enclosure:
         if self.holes.get(face):
             position = start[:, :2] + np.where(met, at, 0.0)[:, None] * ray[:, :2]
             rate = ray[:, 2] * upward
-            self._look_into_holes(face, met, (position[:, 0], position[:, 1]), (ray[:, 0], ray[:, 1]), rate, result)
+            self._look_into_holes(
+                face, met, (position[:, 0], position[:, 1]), (ray[:, 0], ray[:, 1]), rate, result
+            )
 
     def _look_into_holes(
         self,

@@ -61,7 +61,12 @@ def _folds_back(points: Array, following: Array, i: int, j: int) -> bool:
 
 
 def _segments_touch(a: Array, b: Array, c: Array, d: Array) -> bool:
-    one, two, three, four = _cross(b - a, c - a), _cross(b - a, d - a), _cross(d - c, a - c), _cross(d - c, b - c)
+    one, two, three, four = (
+        _cross(b - a, c - a),
+        _cross(b - a, d - a),
+        _cross(d - c, a - c),
+        _cross(d - c, b - c),
+    )
     if ((one > 0) != (two > 0)) and ((three > 0) != (four > 0)) and 0.0 not in (one, two, three, four):
         return True
     return any(

@@ -88,17 +88,19 @@ class Cylinder(Solid):
     def _split(self, points: ArrayLike) -> tuple[Array, Array]:
         """Position along the axis (n,), and the offset from it (n, 3)."""
         offset = np.atleast_2d(np.asarray(points, dtype=float)) - self.centre
-        along = offset @ self.axis
+        along = offset[:, 0] * self.axis[0] + offset[:, 1] * self.axis[1] + offset[:, 2] * self.axis[2]
         return along, offset - along[:, None] * self.axis
 
     def chord(self, origin: Array, direction: Array) -> tuple[Array, Array]:
-        along, offset = self._split(origin)
-        rate = direction @ self.axis
-        sideways = direction - rate[:, None] * self.axis
-        a, b = (sideways * sideways).sum(axis=1), (sideways * offset).sum(axis=1)
-        c = (offset * offset).sum(axis=1) - self.radius**2
+        ux, uy, uz = self.axis
+        px, py, pz = (np.atleast_2d(origin) - self.centre).T
+        dx, dy, dz = direction.T
+        along, rate = px * ux + py * uy + pz * uz, dx * ux + dy * uy + dz * uz
+        a = dx * dx + dy * dy + dz * dz - rate * rate
+        b = dx * px + dy * py + dz * pz - rate * along
+        c = px * px + py * py + pz * pz - along * along - self.radius**2
         root = b * b - a * c
-        parallel = a < 1e-24
+        parallel = a < 1e-12 * (a + rate * rate)
         spread = np.sqrt(np.maximum(root, 0.0)) / np.where(parallel, 1.0, a)
         middle = -b / np.where(parallel, 1.0, a)
         missed = np.where(parallel, c > 0.0, root <= 0.0)
@@ -139,11 +141,13 @@ class Sphere(Solid):
 
     def chord(self, origin: Array, direction: Array) -> tuple[Array, Array]:
         offset = np.atleast_2d(origin) - self.centre
-        a, b = (direction * direction).sum(axis=1), (direction * offset).sum(axis=1)
-        root = b * b - a * ((offset * offset).sum(axis=1) - self.radius**2)
+        a, b = np.einsum("ij,ij->i", direction, direction), np.einsum("ij,ij->i", direction, offset)
+        root = b * b - a * (np.einsum("ij,ij->i", offset, offset) - self.radius**2)
         spread = np.sqrt(np.maximum(root, 0.0))
         missed = root <= 0.0
-        return _met(np.where(missed, NOTHING, (-b - spread) / a), np.where(missed, -NOTHING, (-b + spread) / a))
+        return _met(
+            np.where(missed, NOTHING, (-b - spread) / a), np.where(missed, -NOTHING, (-b + spread) / a)
+        )
 
     def distance(self, points: ArrayLike) -> Array:
         offset = np.atleast_2d(np.asarray(points, dtype=float)) - self.centre
