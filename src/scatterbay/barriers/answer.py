@@ -77,7 +77,9 @@ class Answer:
         """
         energy = check_energy(energy_kev)
         nodes_in = np.exp(-self.optical_depth(self.energy_kev)[:, None] / self.cosines)
-        total = self.diffuse.sum(axis=-1) + nodes_in[:, :, None] * dose.per_fluence(self.energy_kev).T[:, None, :]
+        total = (
+            self.diffuse.sum(axis=-1) + nodes_in[:, :, None] * dose.per_fluence(self.energy_kev).T[:, None, :]
+        )
         log = np.log(np.maximum(total, FLOOR))
         fine = np.einsum("ca,naq->ncq", spline_matrix(self.cosines, cosines), log * self.cosines[:, None])
         return self._over_energy(energy, np.moveaxis(fine / cosines[:, None], 0, -1)).transpose(1, 2, 0)
@@ -89,7 +91,9 @@ class Answer:
         """
         energy = check_energy(energy_kev)
         log = np.log(np.maximum(self.diffuse / self.outgoing_weights, FLOOR))
-        fine = np.einsum("ca,naqm->ncqm", spline_matrix(self.cosines, incoming), log * self.cosines[:, None, None])
+        fine = np.einsum(
+            "ca,naqm->ncqm", spline_matrix(self.cosines, incoming), log * self.cosines[:, None, None]
+        )
         fine /= incoming[:, None, None]
         over_out = cubic(outgoing, *_to_both_ends(self.outgoing, fine))
         return np.exp(self._over_energy(energy, np.moveaxis(over_out, 0, -1))).transpose(1, 3, 0, 2)
@@ -117,7 +121,9 @@ class Answer:
     def from_bytes(cls, content: bytes, sheets: Sheets) -> Answer:
         """The inverse of ``to_bytes``; raises ValueError, KeyError or OSError on anything else."""
         with np.load(io.BytesIO(content), allow_pickle=False) as kept:
-            arrays = [kept[name] for name in ("energy", "cosines", "outgoing", "weights", "diffuse", "straight")]
+            arrays = [
+                kept[name] for name in ("energy", "cosines", "outgoing", "weights", "diffuse", "straight")
+            ]
         return cls(sheets, *arrays)
 
 

@@ -11,7 +11,9 @@ import typer
 def command(
     file: Annotated[Path, typer.Argument(help="The scenario file (YAML).", show_default=False)],
     json: Annotated[bool, typer.Option("--json", help="Print JSON: every number with its unit.")] = False,
-    csv: Annotated[bool, typer.Option("--csv", help="Print CSV: a row per place, time base and goal.")] = False,
+    csv: Annotated[
+        bool, typer.Option("--csv", help="Print CSV: a row per place, time base and goal.")
+    ] = False,
 ) -> int:
     """Assess every occupied place of a bay: what arrives, by which path, against which goal.
 

@@ -13,6 +13,7 @@ from scatterbay.engine.energies import Ladder, Rungs
 from scatterbay.engine.media import Matter, free_electron, momentum, thomson
 from scatterbay.engine.points import ScatterPoints
 from scatterbay.engine.walls import Walls, Way
+from scatterbay.errors import UsageError
 from scatterbay.physics import dose
 from scatterbay.physics.constants import ELECTRON_REST_ENERGY
 from scatterbay.physics.slab.grid import LOWEST_KEV
@@ -31,8 +32,16 @@ class Surroundings:
     """What lies between points and places."""
 
     bodies: Bodies
-    walls: Walls | None
+    faces: Walls | None
+    """None: nothing but bodies."""
     ladder: Ladder
+
+    @property
+    def walls(self) -> Walls:
+        """The faces, where there must be some."""
+        if self.faces is None:
+            raise UsageError("these surroundings have no walls")
+        return self.faces
 
     @cached_property
     def free_log_dose(self) -> Array:
@@ -114,7 +123,7 @@ class Sight:
         ray = place - position
         length = np.sqrt(np.einsum("ij,ij->i", ray, ray))
         everything = np.arange(len(ray))
-        ways = around.walls.ways(position, place) if around.walls else [Way(everything, None, None)]
+        ways = around.faces.ways(position, place) if around.faces else [Way(everything, None, None)]
         return cls(ray, length, ways, around.bodies.on_the_way(position, ray, length), around)
 
     def carried(self, rungs: Rungs) -> Array:

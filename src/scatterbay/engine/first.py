@@ -125,4 +125,4 @@ def _density(steep: float, total: Array, depth: Array) -> Array:
     """Density of the truncated exponential law."""
     if steep == 0.0:
         return 1.0 / total
-    return steep * np.exp(-steep * depth) / -np.expm1(-steep * total)  # type: ignore[no-any-return]
+    return steep * np.exp(-steep * depth) / -np.expm1(-steep * total)

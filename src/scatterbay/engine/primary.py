@@ -205,4 +205,4 @@ def _straight(beam: PrimaryBeam, place: Array, around: Surroundings) -> tuple[Ar
 
 def without_bodies(around: Surroundings) -> Surroundings:
     """The same walls with no bodies in the way."""
-    return Surroundings(Bodies((), ()), around.walls, around.ladder)
+    return Surroundings(Bodies((), ()), around.faces, around.ladder)

@@ -26,7 +26,7 @@ def spread_points(count: int, dimensions: int, shift: Array) -> Array:
     for _ in range(60):
         root = (1.0 + root) ** (1.0 / (dimensions + 1))
     steps = root ** -np.arange(1.0, dimensions + 1)
-    return (shift + np.arange(1, count + 1)[:, None] * steps) % 1.0  # type: ignore[no-any-return]
+    return (shift + np.arange(1, count + 1)[:, None] * steps) % 1.0
 
 
 def generator(seed: int, *stream: int) -> np.random.Generator:

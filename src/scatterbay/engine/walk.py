@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass, field
 
 import numpy as np
@@ -99,7 +100,7 @@ def _next_collisions(
 
 
 def _scattered(
-    points: ScatterPoints, matters: list[Matter] | tuple[Matter, ...], ladder: Ladder, random: np.random.Generator,
+    points: ScatterPoints, matters: Sequence[Matter], ladder: Ladder, random: np.random.Generator,
     balance: Balance,
 ) -> tuple[Array, Array, Array]:  # fmt: skip
     """Direction (n, 3), energy (n,) and weight (n,) of the photon that leaves each collision.

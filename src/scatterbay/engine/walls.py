@@ -47,14 +47,14 @@ class Behind:
         low = self.inverse_cosines[row]
         share = (inverse - low) / (self.inverse_cosines[row + 1] - low)
         first, last = self._at(row, rungs), self._at(row + 1, rungs)
-        return first + share * (last - first)  # type: ignore[no-any-return]
+        return first + share * (last - first)
 
     def _at(self, row: Ints, rungs: Rungs) -> Array:
         columns = self.values.shape[-1]
         flat = self.values.reshape(self.values.shape[0], -1)
         position = row * columns + rungs.index
         low = flat.take(position, axis=1)
-        return low + rungs.share * (flat.take(position + 1, axis=1) - low)  # type: ignore[no-any-return]
+        return low + rungs.share * (flat.take(position + 1, axis=1) - low)
 
 
 @dataclass(frozen=True)
@@ -122,7 +122,7 @@ class Walls:
         ways = []
         for signature, rays in self.sorted_by_signature(met):
             faces = [crossing[0] for crossing in signature]
-            cosine = met.cosine[np.ix_(faces, rays)].max(axis=0) if faces else None
+            cosine = met.cosine[faces][:, rays].max(axis=0) if faces else None
             ways.append(Way(rays, self.behind(signature) if faces else None, cosine))
         return ways
 
@@ -149,7 +149,7 @@ class Walls:
         code = np.where(some, code, -1)
         crossed = int(some.sum(axis=0).max())
         if crossed == 1:
-            return code.max(axis=0, keepdims=True)  # type: ignore[no-any-return]
+            return code.max(axis=0, keepdims=True)
         if crossed > MOST_CROSSED:
             raise OutOfRangeError(
                 f"a straight line crosses {crossed} barriers; at most {MOST_CROSSED} are followed"

@@ -95,7 +95,9 @@ def _rates(scenario: Scenario, rows: list[Contribution], drives: Mapping[str, fl
     """Rates by path and beam; zero where a beam has no such path."""
     names = [beam.name for beam in scenario.beams]
     shape = next((row.values.shape for row in rows), (1, len(dose.QUANTITIES)))
-    rates: Rates = {path: {name: np.zeros(shape) for name in names} for path in ("primary", "scatter", "leakage")}
+    rates: Rates = {
+        path: {name: np.zeros(shape) for name in names} for path in ("primary", "scatter", "leakage")
+    }
     for row in rows:
         if row.path != PLANE_BOUND:
             rates[row.path][row.beam] = rates[row.path][row.beam] + drives[row.beam] * row.values
@@ -189,5 +191,3 @@ def _factors(scenario: Scenario) -> tuple[Factors, ...]:
         )
         for load in scenario.workloads
     )
-
-

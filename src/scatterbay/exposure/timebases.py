@@ -39,7 +39,9 @@ def instantaneous(rates: Mapping[str, Array], sets: Sequence[Sequence[str]]) -> 
     return np.asarray(sum(max((rates[b] for b in names), key=lambda r: float(r.mean())) for names in sets))
 
 
-def within(rates: Mapping[str, Array], seconds: Mapping[str, float], span: float, sets: Sequence[Sequence[str]]) -> Array:
+def within(
+    rates: Mapping[str, Array], seconds: Mapping[str, float], span: float, sets: Sequence[Sequence[str]]
+) -> Array:
     """Dose in the worst span of time [s], (replicates,).
 
     Each set fills the span with its beams, strongest first, each for no longer than its stated time.
@@ -55,7 +57,10 @@ def within(rates: Mapping[str, Array], seconds: Mapping[str, float], span: float
 
 
 def weekly(
-    primary: Mapping[str, Array], other: Mapping[str, Array], beams: Sequence[Beam], loads: Mapping[str, Workload]
+    primary: Mapping[str, Array],
+    other: Mapping[str, Array],
+    beams: Sequence[Beam],
+    loads: Mapping[str, Workload],
 ) -> tuple[Array, Array]:
     """Dose per week and per year at full occupancy, (replicates,) each."""
     week = year = np.zeros_like(next(iter(other.values())))

@@ -56,7 +56,7 @@ def _cross(a: Array, b: Array) -> float:
 
 def _folds_back(points: Array, following: Array, i: int, j: int) -> bool:
     one, two = following[i] - points[i], following[j] - points[j]
-    length = np.linalg.norm(one) * np.linalg.norm(two)
+    length = float(np.linalg.norm(one) * np.linalg.norm(two))
     return abs(_cross(one, two)) <= 1e-12 * length and float(one @ two) < 0.0
 
 

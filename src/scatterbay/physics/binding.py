@@ -42,7 +42,7 @@ class IncoherentShape:
     @cached_property
     def _log_nodes(self) -> tuple[Array, Array]:
         x = scattering.momentum_nodes()
-        s = sum(w / atomic_weight(z) * scattering.incoherent_function(z) for z, w in self.fractions)
+        s = np.sum([w / atomic_weight(z) * scattering.incoherent_function(z) for z, w in self.fractions], axis=0)
         first = np.array([x[0] * 1e-4])
         x, s = np.concatenate([first, x]), np.concatenate([[s[0] * 1e-8], s])
         return np.log(x), np.log(AVOGADRO * s)
@@ -77,7 +77,8 @@ class CoherentShape:
     def pieces(self) -> tuple[Array, Array, Array]:
         """Lower ends y (m,), exponents b (m,), and ln a (m,): the last piece is open upwards."""
         x = scattering.momentum_nodes()
-        f2 = AVOGADRO * sum(w / atomic_weight(z) * scattering.form_factor(z) ** 2 for z, w in self.fractions)
+        parts = [w / atomic_weight(z) * scattering.form_factor(z) ** 2 for z, w in self.fractions]
+        f2 = AVOGADRO * np.sum(parts, axis=0)
         log_y, log_f = 2.0 * np.log(x), np.log(f2)
         slope = np.diff(log_f) / np.diff(log_y)
         exponent = np.concatenate([[0.0], slope, slope[-1:]])

@@ -68,4 +68,4 @@ def klein_nishina_total(energy_kev: F) -> F:
     closed = (1.0 + b) / b**2 * (2.0 * (1.0 + b) / (1.0 + 2.0 * b) - log / b)
     closed = closed + log / (2.0 * b) - (1.0 + 3.0 * b) / (1.0 + 2.0 * b) ** 2
     total = 2.0 * np.pi * ELECTRON_RADIUS**2 * np.where(energy_kev < SMALL_ENERGY_KEV, series, closed)
-    return total[()]  # type: ignore[no-any-return]
+    return total if isinstance(energy_kev, np.ndarray) else float(total)

@@ -64,7 +64,11 @@ def spline_matrix(nodes: Array, x: Array) -> Array:
     system, right = np.zeros((n, n)), np.zeros((n, n))
     for i in range(1, n - 1):
         system[i, i - 1 : i + 2] = steps[i - 1], 2.0 * (steps[i - 1] + steps[i]), steps[i]
-        right[i, i - 1 : i + 2] = 6.0 / steps[i - 1], -6.0 * (1.0 / steps[i - 1] + 1.0 / steps[i]), 6.0 / steps[i]
+        right[i, i - 1 : i + 2] = (
+            6.0 / steps[i - 1],
+            -6.0 * (1.0 / steps[i - 1] + 1.0 / steps[i]),
+            6.0 / steps[i],
+        )
     system[0, :3] = -steps[1], steps[0] + steps[1], -steps[0]
     system[-1, -3:] = -steps[-1], steps[-2] + steps[-1], -steps[-2]
     curvature = np.linalg.solve(system, right)

@@ -73,7 +73,9 @@ def _element(z: int, free_electrons: bool) -> tuple[Array, Array, Array]:
         if start < 2:
             photo[start:] = np.maximum(photo[start:], 1e-12 * total[start:])
         else:
-            slope = np.log(photo[start - 1] / photo[start - 2]) / np.log(energy[start - 1] / energy[start - 2])
+            slope = np.log(photo[start - 1] / photo[start - 2]) / np.log(
+                energy[start - 1] / energy[start - 2]
+            )
             photo[start:] = photo[start - 1] * (energy[start:] / energy[start - 1]) ** slope
         factor[start:] = (total - coherent - photo - pair)[start:] / incoherent[start:]
     if free_electrons:

@@ -75,7 +75,9 @@ class Spectrum:
         while weight @ np.exp(-attenuation * high) > target:
             low, high = high, 2.0 * high
             if high > THICKEST_HALF_VALUE_LAYER:
-                raise OutOfRangeError(f"no layer of {material.name} lets only {transmission:g} of this beam pass")
+                raise OutOfRangeError(
+                    f"no layer of {material.name} lets only {transmission:g} of this beam pass"
+                )
         for _ in range(80):
             middle = 0.5 * (low + high)
             low, high = (middle, high) if weight @ np.exp(-attenuation * middle) > target else (low, middle)

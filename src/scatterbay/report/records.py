@@ -85,7 +85,9 @@ def _place(place: PlaceResult) -> dict[str, Any]:
         "verdict": place.verdict,
         "reasons": list(place.reasons),
         **{base: _figure(place.figures[base, quantity]) for base in TIME_BASES},
-        "other_quantities": {q: {base: _figure(place.figures[base, q]) for base in TIME_BASES} for q in sorted(other)},
+        "other_quantities": {
+            q: {base: _figure(place.figures[base, q]) for base in TIME_BASES} for q in sorted(other)
+        },
         "single_scatter_rate": _rate(place.single_scatter[quantity], quantity),
         "all_scatter_rate": _rate(place.all_scatter[quantity], quantity),
         "goals": [_goal(goal) for goal in place.goals],

@@ -28,13 +28,17 @@ def show_assessment(assessment: Assessment, screen: Screen) -> None:
 
 def headline(assessment: Assessment) -> str:
     """One sentence: what is above, what is too close to call, how many are below."""
-    groups = {verdict: [p.name for p in assessment.places if p.verdict == verdict] for verdict in (ABOVE, CLOSE)}
+    groups = {
+        verdict: [p.name for p in assessment.places if p.verdict == verdict] for verdict in (ABOVE, CLOSE)
+    }
     below = sum(p.verdict == BELOW for p in assessment.places)
     parts = [f"{verdict.upper()}: {', '.join(names)}." for verdict, names in groups.items() if names]
     count = len(assessment.places)
     if below:
         everywhere = below == count
-        parts.append(f"BELOW every goal at {'all ' if everywhere else ''}{below} of {count} places, by this estimate.")
+        parts.append(
+            f"BELOW every goal at {'all ' if everywhere else ''}{below} of {count} places, by this estimate."
+        )
     return " ".join(parts) or "No place has a design goal: nothing was judged."
 
 
@@ -43,7 +47,8 @@ def _show_place(place: PlaceResult, screen: Screen) -> None:
     at = ", ".join(f"{x:.2f}" for x in place.at)
     where = f"{place.how}; " if place.how else ""
     screen.paragraph(
-        f"{where}at ({at}) m; {place.people} ({place.area} area), occupancy {place.occupancy:.3g}", indent="  "
+        f"{where}at ({at}) m; {place.people} ({place.area} area), occupancy {place.occupancy:.3g}",
+        indent="  ",
     )
     for reason in place.reasons:
         screen.paragraph(reason, indent="    ", first="  ! ")
@@ -78,7 +83,9 @@ def _show_paths(place: PlaceResult, screen: Screen) -> None:
         for share in sorted(added, key=lambda s: -s.rate[quantity])
         if share.rate[quantity] > 0.0
     ]
-    screen.paragraph("; ".join(parts) or "nothing arrives", indent="    ", first=f"  {SYMBOLS[quantity]}, made of ")
+    screen.paragraph(
+        "; ".join(parts) or "nothing arrives", indent="    ", first=f"  {SYMBOLS[quantity]}, made of "
+    )
     if place.all_scatter[quantity] > 0.0:
         single, every = place.single_scatter[quantity], place.all_scatter[quantity]
         screen.paragraph(

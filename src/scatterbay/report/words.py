@@ -34,7 +34,9 @@ def in_unit(value: float, time_base: str) -> float:
 
 def kind(time_base: str, quantity: str) -> str:
     """The kind of quantity that a figure of this time base is."""
-    suffix = {"rate": " rate", "day": " rate", "hour": "", "week": " per week", "year": " per year"}[time_base]
+    suffix = {"rate": " rate", "day": " rate", "hour": "", "week": " per week", "year": " per year"}[
+        time_base
+    ]
     return quantity + suffix
 
 

@@ -10,7 +10,17 @@ from functools import cache
 from scatterbay.errors import DataFileError
 from scatterbay.resources import folder
 
-HEADER_KEYS = ("title", "columns", "interpolation", "range", "source", "obtained", "licence", "version", "gaps")
+HEADER_KEYS = (
+    "title",
+    "columns",
+    "interpolation",
+    "range",
+    "source",
+    "obtained",
+    "licence",
+    "version",
+    "gaps",
+)
 
 
 @dataclass(frozen=True)
@@ -42,7 +52,9 @@ class Table:
                 float(row[position])
             except ValueError:
                 column = self.columns[position]
-                return DataFileError(f"data/{self.name}:{number}: '{row[position]}' is not a number ({column})")
+                return DataFileError(
+                    f"data/{self.name}:{number}: '{row[position]}' is not a number ({column})"
+                )
         return DataFileError(f"data/{self.name}: broken column")
 
 

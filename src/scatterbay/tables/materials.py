@@ -21,10 +21,14 @@ class Material:
     source: str
 
     @classmethod
-    def from_symbols(cls, name: str, density_g_cm3: float, fractions: dict[str, float], source: str) -> Material:
+    def from_symbols(
+        cls, name: str, density_g_cm3: float, fractions: dict[str, float], source: str
+    ) -> Material:
         """A material from mass fractions by element symbol, normalised to 1."""
         total = sum(fractions.values())
-        pairs = sorted((atomic_number(symbol), value / total) for symbol, value in fractions.items() if value > 0)
+        pairs = sorted(
+            (atomic_number(symbol), value / total) for symbol, value in fractions.items() if value > 0
+        )
         return cls(name, density_g_cm3, tuple(pairs), source)
 
 
@@ -62,7 +66,12 @@ def material(name: str, defined: Iterable[Material] = ()) -> Material:
 def _shipped() -> dict[str, Material]:
     table = read_table("materials.csv", ("name", "also", "density", "composition", "source"))
     found = {}
-    columns = (table.texts("name"), table.numbers("density"), table.texts("composition"), table.texts("source"))
+    columns = (
+        table.texts("name"),
+        table.numbers("density"),
+        table.texts("composition"),
+        table.texts("source"),
+    )
     for name, density, composition, source in zip(*columns, strict=True):
         parts = (part.split(":") for part in composition.split())
         found[name] = Material.from_symbols(name, density, {s: float(v) for s, v in parts}, source)

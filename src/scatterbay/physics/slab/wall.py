@@ -43,7 +43,9 @@ def wall_answer(layers: Sequence[Layer]) -> WallAnswer:
         once = outgoing_rows(grid, uncollided[:, None]) * wanted + outgoing_rows(grid, diffuse)
         back, top = outgoing_rows(grid, reflected), outgoing_rows(grid, layer.reflected)
         lit = layer.uncollided[:, None] * reflected
-        down = solve_reflections(grid, layer.transmitted + multiply(grid, lit, top), multiply(grid, back, top))
+        down = solve_reflections(
+            grid, layer.transmitted + multiply(grid, lit, top), multiply(grid, back, top)
+        )
         diffuse = layer.uncollided[:, None] * diffuse + down @ once
         if layer is not layers[0]:
             up = lit + multiply(grid, down, back)
