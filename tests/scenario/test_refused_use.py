@@ -42,6 +42,11 @@ USE = [
     Edit("weeks: 48 weeks", "weeks: §48 h", ("not a plain number",)),
     Edit(
         "  gamma shot: {beam on",
+        "  §gama shot: {beam on",
+        ("no beam 'gama shot'", "did you mean 'gamma shot'"),
+    ),
+    Edit(
+        "  gamma shot: {beam on",
         "  §spare: {beam on: 1 h/week}\n  gamma shot: {beam on",
         ("no beam 'spare'",),
     ),

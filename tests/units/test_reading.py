@@ -9,7 +9,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from scatterbay.errors import ScatterbayError
-from scatterbay.units import KINDS, Quantity, TextError, format_quantity, read
+from scatterbay.units import KINDS, Quantity, TextError, format_quantity, read, read_number
 
 
 @pytest.mark.parametrize(
@@ -75,6 +75,9 @@ def test_one_of_several_kinds_is_recognised() -> None:
         ("1,5 m", "length", ["comma", "decimal point"], 1),
         ("1,500 mm", "length", ["comma"], 1),
         ("1 000 mm", "length", ["two numbers in a row"], 0),
+        ("6 mSv/y", "ambient dose equivalent per year", ["'y' is not used", "write year"], 6),
+        ("6 mSv/wk", "ambient dose equivalent per week", ["write week"], 6),
+        ("6 mSv/month", "ambient dose equivalent per week", ["write week or year"], 6),
         ("5 msv/h", "ambient dose equivalent rate", ["'msv'", "did you mean 'mSv'"], 2),
         ("5 MSV/h", "ambient dose equivalent rate", ["'MSV'", "did you mean 'mSv'"], 2),
         ("225 KV", "voltage", ["'KV'", "did you mean 'kV'"], 4),
@@ -126,6 +129,20 @@ def test_refuses(text: str, kind: str, fragments: list[str], start: int) -> None
     assert caught.value.start == start
     assert isinstance(caught.value, ScatterbayError)
     assert caught.value.exit_code == 2
+
+
+@pytest.mark.parametrize(
+    ("text", "value"),
+    [("0.25", 0.25), ("1/4", 0.25), ("25 %", 0.25), ("1 1/2", 1.5), (" 48 ", 48.0), ("-1", -1.0)],
+)
+def test_plain_numbers(text: str, value: float) -> None:
+    assert read_number(text) == pytest.approx(value)
+
+
+@pytest.mark.parametrize("text", ["", "often", "1 m", "1/0", "1e999", "1,5", "1/4/2"])
+def test_what_is_no_plain_number(text: str) -> None:
+    with pytest.raises(TextError):
+        read_number(text)
 
 
 @given(

@@ -20,7 +20,7 @@ class _Body(Form):
 class Box(_Body):
     """A block with sides along x, y and z, turned about the vertical if need be."""
 
-    shape: Literal["box"]
+    shape: Literal["box"] = Field(description="The shape of the body")
     size: Sizes = Field(description="Sizes along x, y and z")
     turned: Angle | None = Field(
         None, description="Rotation about the vertical, counter-clockwise from above"
@@ -30,7 +30,7 @@ class Box(_Body):
 class Cylinder(_Body):
     """A solid cylinder in any direction."""
 
-    shape: Literal["cylinder"]
+    shape: Literal["cylinder"] = Field(description="The shape of the body")
     diameter: Length = Field(description="Diameter")
     length: Length = Field(description="Length along the axis")
     along: Direction | None = Field(None, description="Direction of the axis; upright if left out")
@@ -39,14 +39,14 @@ class Cylinder(_Body):
 class Sphere(_Body):
     """A solid sphere."""
 
-    shape: Literal["sphere"]
+    shape: Literal["sphere"] = Field(description="The shape of the body")
     diameter: Length = Field(description="Diameter")
 
 
 class Pipe(_Body):
     """A hollow cylinder in any direction, empty or filled."""
 
-    shape: Literal["pipe"]
+    shape: Literal["pipe"] = Field(description="The shape of the body")
     outer_diameter: Length = Field(description="Outer diameter")
     wall: Length = Field(description="Thickness of the wall")
     length: Length = Field(description="Length along the axis")
@@ -57,7 +57,7 @@ class Pipe(_Body):
 class Plate(_Body):
     """A flat rectangle."""
 
-    shape: Literal["plate"]
+    shape: Literal["plate"] = Field(description="The shape of the body")
     width: Length = Field(description="Width, horizontal where it stands upright")
     height: Length = Field(description="Height")
     thickness: Length = Field(description="Thickness")

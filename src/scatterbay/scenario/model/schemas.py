@@ -32,8 +32,10 @@ def _pattern(kinds: tuple[str, ...]) -> str:
     if compound or "time" in kinds or "charge" in kinds:
         return rf"^\s*{_NUMBER}\s*[^\s0-9].*$"
     units = "|".join(sorted(symbols, key=lambda symbol: (-len(symbol), symbol)))
-    amount = rf"{_NUMBER}(\s+[0-9]+/[0-9]+)?\s*({units})?"
-    return rf"^\s*{amount}(\s+{amount})?{_TOLERANCE}\s*$"
+    number = rf"{_NUMBER}(\s+[0-9]+/[0-9]+)?"
+    amount = rf"{number}\s*({units})"
+    shared = rf"{number}\s*(\+/-|\+-|±)\s*{amount}"
+    return rf"^\s*({amount}(\s+{amount})?{_TOLERANCE}|{shared})\s*$"
 
 
 def number_or(what: Schema, **limits: float) -> Schema:
