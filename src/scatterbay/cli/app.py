@@ -7,7 +7,7 @@ from typing import Annotated
 import typer
 
 from scatterbay import __version__
-from scatterbay.cli import assess
+from scatterbay.cli import assess, barrier, new, schema, source
 
 app = typer.Typer(
     name="scatterbay",
@@ -21,7 +21,11 @@ app = typer.Typer(
     pretty_exceptions_enable=False,
     context_settings={"help_option_names": ["-h", "--help"], "max_content_width": 80},
 )
-app.command("assess")(assess.command)
+app.command("assess", short_help="Assess every occupied place of a bay.")(assess.command)
+app.command("barrier", short_help="Transmission of one barrier, plane and lit patch.")(barrier.command)
+app.command("source", short_help="Spectrum, value layers and output of a source.")(source.command)
+app.command("new", short_help="Copy a commented scenario to start from.")(new.command)
+app.command("schema", short_help="Print the JSON Schema of the scenario file.")(schema.command)
 
 
 def _version(wanted: bool) -> None:

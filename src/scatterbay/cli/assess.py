@@ -23,20 +23,15 @@ def command(
     Example: scatterbay assess weld-bay.yaml
     """
     from scatterbay.api import assess
-    from scatterbay.cli.output import one_format
+    from scatterbay.cli.output import one_format, put
     from scatterbay.exposure.results import BELOW
+    from scatterbay.report.records import assessment_record, assessment_rows
+    from scatterbay.report.terminal import show_assessment
 
     one_format(json, csv)
-    assessment = assess(file)
-    if json or csv:
-        from scatterbay.report.records import assessment_record, assessment_rows
-        from scatterbay.report.text import as_csv, as_json
-
-        text = as_json(assessment_record(assessment)) if json else as_csv(assessment_rows(assessment))
-        typer.echo(text, nl=False)
-    else:
-        from scatterbay.report.screen import Screen
-        from scatterbay.report.terminal import show_assessment
-
-        show_assessment(assessment, Screen())
-    return 0 if assessment.worst == BELOW else 1
+    found = assess(file)
+    put(
+        json, csv, lambda: assessment_record(found), lambda: assessment_rows(found),
+        lambda screen: show_assessment(found, screen),
+    )  # fmt: skip
+    return 0 if found.worst == BELOW else 1

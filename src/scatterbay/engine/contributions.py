@@ -169,7 +169,7 @@ def _primary_rows(scene: Scene, beam: SceneBeam) -> list[Contribution]:
         found = primary_at(narrow, patches, place.at, scene.around)
         judged = found.plane if scene.primary_by_plane and found.in_field else found.patch
         rows.append(Contribution(place.name, beam.name, PRIMARY, 0, _steady(judged)))
-        if found.in_field:
+        if found.in_field and beam.field.kind != "everywhere":
             rows.append(Contribution(place.name, beam.name, PLANE_BOUND, 0, _steady(found.plane)))
     return rows
 

@@ -6,8 +6,9 @@ from collections.abc import Iterable
 from dataclasses import dataclass
 from datetime import date
 
-from scatterbay.errors import UsageError
-from scatterbay.physics.nuclide import decayed, nuclide_spectrum
+from scatterbay.errors import OutOfRangeError, UsageError
+from scatterbay.physics.nuclide import below, decayed, nuclide_spectrum
+from scatterbay.physics.slab.grid import HIGHEST_KEV
 from scatterbay.physics.spectrum import Filter, Spectrum
 from scatterbay.physics.tube import filter_for_half_value_layer, tube_spectrum
 from scatterbay.scenario.parts import Assumption, SealedSource, Source, XrayTube
@@ -84,8 +85,9 @@ def _sealed(source: SealedSource) -> Output:
     if source.activity_date and source.assessed_date:
         days = (_date(source.assessed_date) - _date(source.activity_date)).days
         activity = decayed(activity, found.half_life, 86400.0 * days)
-    spectrum = nuclide_spectrum(found)
+    spectrum, left_out = _within_transport(nuclide_spectrum(found), source)
     notes = (
+        *left_out,
         Assumption(
             "nuclide spectra",
             f"source '{source.name}': lines of {source.nuclide} below 20 keV are taken as stopped in the capsule; "
@@ -93,6 +95,23 @@ def _sealed(source: SealedSource) -> Output:
         ),
     )
     return Output(spectrum, spectrum, activity, notes)
+
+
+def _within_transport(spectrum: Spectrum, source: SealedSource) -> tuple[Spectrum, tuple[Assumption, ...]]:
+    """The lines that barrier transport covers, and a note on those it does not.
+
+    Raises
+    ------
+    OutOfRangeError : the lines above carry more than a thousandth of the energy.
+    """
+    try:
+        kept, share = below(spectrum, HIGHEST_KEV)
+    except OutOfRangeError as error:
+        raise OutOfRangeError(f"source '{source.name}' ({source.nuclide}): {error}") from None
+    if share == 0.0:
+        return kept, ()
+    text = f"lines of {source.nuclide} above {HIGHEST_KEV:g} keV, {share:.0e} of its energy, are left out"
+    return kept, (Assumption("nuclide spectra", f"source '{source.name}': {text}"),)
 
 
 def _date(text: str) -> date:

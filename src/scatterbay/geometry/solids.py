@@ -100,7 +100,7 @@ class Cylinder(Solid):
         b = dx * px + dy * py + dz * pz - rate * along
         c = px * px + py * py + pz * pz - along * along - self.radius**2
         root = b * b - a * c
-        parallel = a < 1e-12 * (a + rate * rate)
+        parallel = a <= 1e-12 * (a + rate * rate)
         spread = np.sqrt(np.maximum(root, 0.0)) / np.where(parallel, 1.0, a)
         middle = -b / np.where(parallel, 1.0, a)
         missed = np.where(parallel, c > 0.0, root <= 0.0)

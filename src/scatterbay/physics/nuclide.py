@@ -12,6 +12,8 @@ from scatterbay.tables.nuclides import Nuclide
 
 WEAKEST = 1e-6
 """Lines below this share of the photons' energy are left out."""
+NEGLIGIBLE = 1e-3
+"""Share of a nuclide's energy that may lie above the range of barrier transport."""
 
 
 def nuclide_spectrum(nuclide: Nuclide) -> Spectrum:
@@ -25,6 +27,24 @@ def nuclide_spectrum(nuclide: Nuclide) -> Spectrum:
     order = np.argsort(nuclide.lines_kev[kept])
     photons = nuclide.per_decay[kept][order] / (4.0 * math.pi)
     return Spectrum(nuclide.lines_kev[kept][order], photons, "decay")
+
+
+def below(spectrum: Spectrum, highest_kev: float) -> tuple[Spectrum, float]:
+    """The lines up to an energy, and the share of the photons' energy that lies above it and is left out.
+
+    Raises
+    ------
+    OutOfRangeError : the share is more than a thousandth.
+    """
+    above = spectrum.energy_kev > highest_kev
+    carried = spectrum.energy_kev * spectrum.photons
+    share = float(carried[above].sum() / carried.sum())
+    if share > NEGLIGIBLE:
+        raise OutOfRangeError(
+            f"{100 * share:.2g} % of the photons' energy is in lines above {highest_kev:g} keV, which barrier "
+            "transport does not cover"
+        )
+    return Spectrum(spectrum.energy_kev[~above], spectrum.photons[~above], spectrum.per), share
 
 
 def decayed(activity: float, half_life: float, elapsed: float) -> float:

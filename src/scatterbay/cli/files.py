@@ -1,0 +1,31 @@
+"""Writes a file whole or not at all, and never over another one unless told to."""
+
+from __future__ import annotations
+
+import os
+import tempfile
+from pathlib import Path
+
+from scatterbay.errors import UsageError
+
+
+def write_whole(target: Path, text: str, force: bool) -> None:
+    """Write text to a file by way of a temporary one beside it.
+
+    Raises
+    ------
+    UsageError : the file exists and ``force`` is off, or it cannot be written.
+    """
+    if target.exists() and not force:
+        raise UsageError(f"{target} exists already; give another name, or --force to overwrite it")
+    name = ""
+    try:
+        handle, name = tempfile.mkstemp(dir=target.parent, prefix=f".{target.name}-")
+        with os.fdopen(handle, "w", encoding="utf-8") as out:
+            out.write(text)
+        Path(name).chmod(0o644)
+        os.replace(name, target)
+    except OSError as error:
+        if name:
+            Path(name).unlink(missing_ok=True)
+        raise UsageError(f"{target} cannot be written: {error.strerror or error}") from None
