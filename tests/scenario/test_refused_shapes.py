@@ -72,6 +72,7 @@ def test_the_outline_of_these_tests_is_good_when_it_is_in_order() -> None:
         ("{east-west door side: open, b: open, c: open, d: open}", None),
         ("{south: open, west: open, north: open, east: open}", "west"),
         ("{south: open, east: open, south 2: open, west: open}", "south 2"),
+        ("{east: open, b: open, c: open, d: open}", "east"),
     ],
 )
 def test_a_compass_word_in_a_side_is_checked(sides: str, name: str | None) -> None:
@@ -82,6 +83,21 @@ def test_a_compass_word_in_a_side_is_checked(sides: str, name: str | None) -> No
         error = refusal(text)
         assert error.problems[0].where == f"room.sides.{name}"
         assert "faces" in error.problems[0].message
+
+
+def test_a_hatch_around_a_spike_of_the_outline_reaches_beyond_it() -> None:
+    spiked = "[[0, 0], [4, 0], [4, 3], [2.05, 3], [2, 1], [1.95, 3], [0, 3]]"
+    text = with_room(spiked, FOUR.replace("}", ", e: open, f: open, g: open}")).replace(
+        "at: [2, 1.5", "at: [1, 1.5"
+    )
+    assert loads(text)
+    hatch = "  openings: {hatch: {in: ceiling, from: [1.5, 0.5], to: [2.5, 1.5], make-up: open}}\n  ceiling"
+    assert "'hatch' reaches beyond the outline" in refusal(text.replace("  ceiling", hatch)).render()
+
+
+def test_a_place_under_a_floor_on_the_ground_lies_in_the_ground() -> None:
+    text = with_room("[[0, 0], [4, 0], [4, 3], [0, 3]]", FOUR).replace("at: [40, 0, 1]", "at: [2, 2, -3]")
+    assert "inside the ground" in refusal(text).render()
 
 
 @pytest.mark.parametrize("section", ["sources", "beams", "workload", "people", "places"])

@@ -87,6 +87,12 @@ THINGS = [
         ("'sheet' reaches out of the room",),
         where="sheet:",
     ),
+    Edit(  # a corner of the wall pokes 20 mm into a face
+        "size: [0.3, 200 mm, 0.5], centre: [7, 1, 0.25], turned: 30 deg",
+        "size: [2, 200 mm, 0.5], centre: [5.0318, 2.855, 0.25], turned: -45 deg",
+        ("'block' reaches out of the room",),
+        where="block:",
+    ),
     Edit("225 kV", "§500 kV", ("outside the model", "40 to 450 kV"), 3),
     Edit("225 kV", "§30 kV", ("outside the model",), 3),
     Edit("anode angle: 22 deg", "anode angle: §95 deg", ("not an anode angle",)),

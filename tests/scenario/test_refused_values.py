@@ -129,6 +129,7 @@ NAMES = [
         f"  §{'x' * 61}: {{at: [12, 2, 1], people: staff}}\n  corner: {{",
         ("cannot be a name", "60"),
     ),
+    Edit("  corner: {", "  §' corner': {at: [12, 2, 1], people: staff}\n  corner: {", ("cannot be a name",)),
     Edit("  corner: {", "  §ball: {at: [12, 2, 1], people: staff}\n  corner: {", ("is a body as well",)),
     Edit(
         "    window: {",
