@@ -14,8 +14,10 @@ from rich.text import Text
 
 NARROWEST = 80
 IN_A_PIPE = 100
+WIDEST = 400
+"""Room that a table is laid out in, so that no cell is ever wrapped or cut."""
 
-STYLES = {"above": "bold reverse", "too close to call": "bold", "below": "", "no goal": "dim"}
+STYLES = {"above": "bold reverse", "too close to call": "bold", "too close": "bold", "below": "", "no goal": "dim"}
 """How verdicts stand out on a terminal; the word itself always says it."""
 
 
@@ -57,6 +59,6 @@ class Screen:
             cells = [Text(cell, style=STYLES.get(cell, "")) for cell in row]
             table.add_row("", *cells)
         with self.console.capture() as captured:
-            self.console.print(table, soft_wrap=True)
+            self.console.print(table, width=WIDEST, soft_wrap=True)
         for line in captured.get().splitlines():
             self.stream.write(line.rstrip() + "\n")

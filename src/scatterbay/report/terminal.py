@@ -6,7 +6,7 @@ from scatterbay import __version__
 from scatterbay.exposure.results import ABOVE, BELOW, CLOSE, TIME_BASES, Assessment, GoalResult, PlaceResult
 from scatterbay.report.cautions import CAUTIONS, NOT_COVERED
 from scatterbay.report.screen import STYLES, Screen
-from scatterbay.report.words import BASES, SYMBOLS, band, path_words, percent, spoken
+from scatterbay.report.words import BASES, SYMBOLS, band, goal_words, path_words, percent, spoken
 from scatterbay.units import significant
 
 
@@ -67,11 +67,11 @@ def _figure_row(place: PlaceResult, base: str, goal: GoalResult | None) -> list[
     figure = goal.figure if goal else place.figure(base)
     name = BASES[base]
     if figure.quantity != place.quantity:
-        name += f" ({SYMBOLS[figure.quantity]})"
+        name += f" ({SYMBOLS[figure.quantity].removeprefix('air ')})"
     cells = [name, spoken(figure.value, base, figure.quantity), band(figure)]
     if goal is None:
         return [*cells, "", "", ""]
-    return [*cells, goal.text, significant(goal.fraction), goal.verdict]
+    return [*cells, goal_words(goal), significant(goal.fraction), goal.verdict.removesuffix(" to call")]
 
 
 def _show_paths(place: PlaceResult, screen: Screen) -> None:

@@ -2,16 +2,18 @@
 
 from __future__ import annotations
 
-from scatterbay.exposure.results import Figure, PathShare
+import re
+
+from scatterbay.exposure.results import Figure, GoalResult, PathShare
 from scatterbay.physics import dose
 from scatterbay.units import choose_unit, factor_of, format_quantity, significant
 
 SYMBOLS = {dose.AIR_KERMA: "air kerma", dose.AMBIENT: "H*(10)"}
 
 BASES = {
-    "rate": "while beam is on",
+    "rate": "beam on",
     "hour": "worst hour",
-    "day": "worst 8 h, average",
+    "day": "8 h average",
     "week": "week",
     "year": "year",
 }
@@ -49,6 +51,11 @@ def band(figure: Figure) -> str:
     """The band of a figure, low to high, in the unit the figure is spoken in."""
     factor = factor_of(choose_unit(figure.value, kind(figure.time_base, figure.quantity)))
     return f"{significant(figure.low / factor)} to {significant(figure.high / factor)}"
+
+
+def goal_words(goal: GoalResult) -> str:
+    """A goal as its author wrote it, less the time base, which the row it stands in names."""
+    return re.split(r" in an? | over ", goal.text)[0]
 
 
 def path_words(share: PathShare) -> str:
