@@ -140,23 +140,32 @@ class Sight:
             else:
                 log[:, way.rays] = found
         for excess, rays, inside in self.matter:
-            log[:, rays] -= rungs.some(rays).of(excess) * inside
-        return np.exp(log) / (self.length * self.length)
+            if rays.size == self.length.size:
+                log -= rungs.of(excess) * inside
+            else:
+                log[:, rays] -= rungs.some(rays).of(excess) * inside
+        np.exp(log, out=log)
+        log /= self.length * self.length
+        return log
 
     def some(self, chosen: Ints) -> Sight:
-        """The sight of some of the positions."""
+        """The sight of some of the positions, in the same order."""
         number = np.full(len(self.length), -1)
         number[chosen] = np.arange(chosen.size)
         ways = []
         for way in self.ways:
-            kept = number[way.rays] >= 0
+            if way.behind is None and len(self.ways) == 1:
+                ways.append(Way(np.arange(chosen.size), None, None))
+                continue
+            mine = number[way.rays]
+            kept = mine >= 0
             if kept.any():
-                cosine = None if way.cosine is None else way.cosine[kept]
-                ways.append(Way(number[way.rays[kept]], way.behind, cosine))
+                ways.append(Way(mine[kept], way.behind, None if way.cosine is None else way.cosine[kept]))
         matter = []
         for excess, rays, inside in self.matter:
-            kept = number[rays] >= 0
-            matter.append((excess, number[rays[kept]], inside[kept]))
+            mine = number[rays]
+            kept = mine >= 0
+            matter.append((excess, mine[kept], inside[kept]))
         return Sight(self.ray[chosen], self.length[chosen], ways, matter, self.around)
 
 

@@ -10,7 +10,7 @@ from numpy.typing import NDArray
 from scatterbay.engine.arrive import Surroundings, dose_from_emitters
 from scatterbay.engine.bodies import Bodies
 from scatterbay.engine.fields import BeamField
-from scatterbay.engine.walls import Signature
+from scatterbay.engine.walls import Group, Signature
 from scatterbay.geometry.enclosure import Crossings
 from scatterbay.physics import dose
 from scatterbay.physics.spectrum import Spectrum
@@ -101,34 +101,30 @@ def lit_patches(beam: PrimaryBeam, around: Surroundings) -> list[LitPatch]:
     origin = np.broadcast_to(beam.origin, direction.shape)
     met = around.walls.enclosure.crossings(origin, origin + FAR * direction)
     return [
-        _patch(beam, around, signature, count, direction[rays], angle[rays], _picked(met, rays))
-        for signature, rays in around.walls.sorted_by_signature(met)
-        for count in range(1, len(signature) + 1)
+        _patch(beam, around, group, count, direction[group.rays], angle[group.rays], met)
+        for group in around.walls.groups(met)
+        for count in range(1, len(group.signature) + 1)
     ]
 
 
-def _picked(met: Crossings, rays: Ints) -> Crossings:
-    return Crossings(met.at[:, rays], met.cosine[:, rays], met.outward[:, rays], met.mask[:, rays])
-
-
 def _patch(
-    beam: PrimaryBeam, around: Surroundings, signature: Signature, count: int, direction: Array, angle: Array,
+    beam: PrimaryBeam, around: Surroundings, group: Group, count: int, direction: Array, angle: Array,
     met: Crossings,
 ) -> LitPatch:  # fmt: skip
     """The far side of the ``count``-th face that these rays cross."""
-    face, outward, _ = signature[count - 1]
+    face, outward, _ = group.signature[count - 1]
     room = around.walls.enclosure
-    incoming = met.cosine[face]
+    at, incoming = met.on(face, group.rays)
     behind = room.thickness[face] if outward or face > room.floor else 0.0
-    reach = FAR * met.at[face] + behind / incoming
+    reach = FAR * at + behind / incoming
     photons = angle[:, None] * beam.spectrum.photons
     if beam.bodies_count:
         photons = photons * np.exp(-_depths(beam, around, direction, reach))
     return LitPatch(
         beam.origin + reach[:, None] * direction,
         room.normal(face) * (1.0 if outward else -1.0),
-        signature[:count],
-        signature[count][0] if count < len(signature) else None,
+        group.signature[:count],
+        group.signature[count][0] if count < len(group.signature) else None,
         incoming,
         photons,
     )
@@ -169,13 +165,13 @@ def _shine(beam: PrimaryBeam, patch: LitPatch, place: Array, around: Surrounding
     outgoing = ray @ patch.normal / np.sqrt(square)
     met = around.walls.enclosure.crossings(patch.position, place)
     total = np.zeros(len(dose.QUANTITIES))
-    for beyond, elements in around.walls.sorted_by_signature(met):
-        if patch.next_face in [face for face, _, _ in beyond]:
+    for group in around.walls.groups(met):
+        if patch.next_face in [face for face, _, _ in group.signature]:
             continue
-        seen = elements[outgoing[elements] > 0.0]
+        seen = group.rays[outgoing[group.rays] > 0.0]
         if not seen.size:
             continue
-        light = patch.light(patch.signature + beyond, beam.spectrum.energy_kev, around)[:, seen]
+        light = patch.light(patch.signature + group.signature, beam.spectrum.energy_kev, around)[:, seen]
         position = outgoing[seen] * (OUTGOING.size - 1)
         index = np.minimum(position.astype(np.int64), OUTGOING.size - 2)
         rows = np.arange(seen.size)
@@ -195,10 +191,10 @@ def _straight(beam: PrimaryBeam, place: Array, around: Surroundings) -> tuple[Ar
     start = np.repeat(beam.origin[None, :], energy.size, axis=0)
     plane = dose_from_emitters(start, energy, place, without_bodies(around)) @ photons
     met = around.walls.enclosure.crossings(beam.origin[None, :], place)
-    signature = around.walls.sorted_by_signature(met)[0][0]
-    cosine = max((float(met.cosine[face, 0]) for face, _, _ in signature), default=1.0)
-    passed = np.full(energy.size, float(not all(around.walls.options(signature))))
-    for answer in around.walls.answers(signature):
+    group = around.walls.groups(met)[0]
+    cosine = 1.0 if group.cosine is None else float(group.cosine[0])
+    passed = np.full(energy.size, float(not all(around.walls.options(group.signature))))
+    for answer in around.walls.answers(group.signature):
         passed = np.maximum(passed, np.exp(-answer.optical_depth(energy) / cosine))
     return dose.per_fluence(energy) @ (photons * passed) / distance**2, plane
 

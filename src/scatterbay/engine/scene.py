@@ -119,11 +119,11 @@ def _behind(walls: Walls, looks: list[Array], place: Array) -> str:
     """What lies on the lines from the sources and bodies to a place."""
     start = np.array(looks)
     found = "wall"
-    for signature, _ in walls.sorted_by_signature(walls.enclosure.crossings(start, place)):
-        options = walls.options(signature)
+    for group in walls.groups(walls.enclosure.crossings(start, place)):
+        options = walls.options(group.signature)
         if not all(options):
             return "open"
-        opened = any(mask != SOLID for _, _, mask in signature)
+        opened = any(mask != SOLID for _, _, mask in group.signature)
         if opened or any(_is_heavy(one.fractions) for stack in options for one in stack):
             found = "lining"
     return found

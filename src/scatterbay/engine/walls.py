@@ -14,7 +14,7 @@ from scatterbay.barriers.makeup import Sheets
 from scatterbay.barriers.store import answer
 from scatterbay.engine.energies import Ladder, Rungs
 from scatterbay.errors import OutOfRangeError
-from scatterbay.geometry.enclosure import SOLID, Crossings, Enclosure
+from scatterbay.geometry.enclosure import SOLID, Crossings, Enclosure, FaceHits
 from scatterbay.physics import dose
 
 Array = NDArray[np.float64]
@@ -23,6 +23,8 @@ Ints = NDArray[np.int64]
 COSINES = 48
 MOST_CROSSED = 6
 """More faces than this on one ray are refused rather than cut short."""
+SIDES = 2**16
+"""Room for a mask in the number that stands for a crossing."""
 
 Crossing = tuple[int, bool, int]
 """Face number, outward or not, and mask of make-ups the ray may meet."""
@@ -55,6 +57,15 @@ class Behind:
         position = row * columns + rungs.index
         low = flat.take(position, axis=1)
         return low + rungs.share * (flat.take(position + 1, axis=1) - low)
+
+
+@dataclass(frozen=True)
+class Group:
+    """Rays that cross the same faces in the same order: their numbers, and the least slanted of their cosines."""
+
+    signature: Signature
+    rays: Ints
+    cosine: Array | None
 
 
 @dataclass(frozen=True)
@@ -119,45 +130,60 @@ class Walls:
     def ways(self, start: Array, end: Array) -> list[Way]:
         """Which walls lie between start (n, 3) and end (3,) or (n, 3) [m], for all rays, by signature."""
         met = self.enclosure.crossings(start, end)
-        ways = []
-        for signature, rays in self.sorted_by_signature(met):
-            faces = [crossing[0] for crossing in signature]
-            cosine = met.cosine[faces][:, rays].max(axis=0) if faces else None
-            ways.append(Way(rays, self.behind(signature) if faces else None, cosine))
-        return ways
+        return [
+            Way(group.rays, self.behind(group.signature) if group.signature else None, group.cosine)
+            for group in self.groups(met)
+        ]
 
-    def sorted_by_signature(self, met: Crossings) -> list[tuple[Signature, Ints]]:
+    def groups(self, met: Crossings) -> list[Group]:
         """The rays of each signature that occurs."""
-        hit = np.isfinite(met.at)
-        faces = np.flatnonzero(hit.any(axis=1))
-        count = met.at.shape[1]
-        if not faces.size:
-            return [((), np.arange(count))]
-        codes = self._codes(met, hit, faces)
-        left, result = np.arange(count), []
-        while left.size:
-            first = codes[:, left[0]]
-            same = (codes[:, left] == first[:, None]).all(axis=0)
-            result.append((tuple(_decoded(code) for code in first if code >= 0), left[same]))
-            left = left[~same]
-        return result
-
-    def _codes(self, met: Crossings, hit: NDArray[np.bool_], faces: Ints) -> Ints:
-        """Crossings in order along each ray as numbers, shape (k, n), -1 where there are no more."""
-        some = hit[faces]
-        code = (faces[:, None] * 2 + met.outward[faces]) * 2**16 + met.mask[faces]
-        code = np.where(some, code, -1)
-        crossed = int(some.sum(axis=0).max())
-        if crossed == 1:
-            return code.max(axis=0, keepdims=True)
-        if crossed > MOST_CROSSED:
+        numbers = met.numbers()
+        most = int(numbers.max(initial=0))
+        if most > MOST_CROSSED:
             raise OutOfRangeError(
-                f"a straight line crosses {crossed} barriers; at most {MOST_CROSSED} are followed"
+                f"a straight line crosses {most} barriers; at most {MOST_CROSSED} are followed"
             )
-        order = np.argsort(met.at[faces], axis=0, kind="stable")[:crossed]
-        return np.take_along_axis(code, order, axis=0)
+        free = np.flatnonzero(numbers == 0)
+        found = [Group((), free, None)] if free.size or not met.count else []
+        if most <= 1:
+            return found + [group for hit in met.hits for group in _by_code(hit)]
+        return found + _in_order(met, np.flatnonzero(numbers > 0))
+
+
+def _by_code(hit: FaceHits) -> list[Group]:
+    """Rays that cross one face only, by direction and mask."""
+    code = hit.outward * SIDES + hit.mask
+    left, found = np.arange(len(hit.rays)), []
+    while left.size:
+        first = int(left[0])
+        same = code[left] == code[first]
+        rows = left[same]
+        crossing = (hit.face, bool(hit.outward[first]), int(hit.mask[first]))
+        found.append(Group((crossing,), hit.rays[rows], hit.cosine[rows]))
+        left = left[~same]
+    return found
+
+
+def _in_order(met: Crossings, rays: Ints) -> list[Group]:
+    """Rays that cross several faces, by the order in which they do."""
+    shape = (len(met.hits), met.count)
+    at, code, cosine = np.full(shape, np.inf), np.full(shape, -1, dtype=np.int64), np.zeros(shape)
+    for k, hit in enumerate(met.hits):
+        at[k, hit.rays] = hit.at
+        code[k, hit.rays] = (hit.face * 2 + hit.outward) * SIDES + hit.mask
+        cosine[k, hit.rays] = hit.cosine
+    code = np.take_along_axis(code, np.argsort(at, axis=0, kind="stable"), axis=0)
+    least_slanted = cosine.max(axis=0)
+    left, found = rays, []
+    while left.size:
+        first = code[:, left[0]]
+        same = (code[:, left] == first[:, None]).all(axis=0)
+        signature = tuple(_decoded(int(one)) for one in first if one >= 0)
+        found.append(Group(signature, left[same], least_slanted[left[same]]))
+        left = left[~same]
+    return found
 
 
 def _decoded(code: int) -> Crossing:
-    face, mask = divmod(int(code), 2**16)
+    face, mask = divmod(code, SIDES)
     return face // 2, bool(face % 2), mask

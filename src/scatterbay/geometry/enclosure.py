@@ -43,19 +43,71 @@ class Upright:
 
 
 @dataclass(frozen=True)
-class Crossings:
-    """Where rays (n,) meet faces (f,).
+class FaceHits:
+    """The rays that cross one face.
 
-    ``at``: ray parameter of the crossing, inf where there is none, shape (f, n).
-    ``cosine``: of the angle to the face's normal, shape (f, n). ``outward``: True where the ray runs along the
-    face's normal (out of the room; from the left of a screen to its right), shape (f, n).
-    ``mask``: which make-ups the ray may meet there, shape (f, n): see ``SOLID``.
+    Parameters
+    ----------
+    face : number of the face.
+    rays : numbers of the rays (m,).
+    at : where on the ray, in units of it (m,).
+    cosine : of the angle to the face's normal (m,).
+    outward : True where the ray runs along the normal: out of the room, from a screen's left to its right (m,).
+    mask : which make-ups the ray may meet there (m,): see ``SOLID``.
     """
 
+    face: int
+    rays: Ints
     at: Array
     cosine: Array
     outward: Flags
     mask: Ints
+
+
+@dataclass(frozen=True)
+class Crossings:
+    """All that ``count`` rays cross, face by face; faces that no ray crosses are left out."""
+
+    count: int
+    hits: tuple[FaceHits, ...]
+
+    def numbers(self) -> Ints:
+        """How many faces each ray crosses, (count,)."""
+        total = np.zeros(self.count, dtype=np.int64)
+        for hit in self.hits:
+            total[hit.rays] += 1
+        return total
+
+    def on(self, face: int, rays: Ints) -> tuple[Array, Array]:
+        """Where these rays cross a face that they all cross, and at what cosine, (m,) each."""
+        hit = next(h for h in self.hits if h.face == face)
+        position = np.searchsorted(hit.rays, rays)
+        return hit.at[position], hit.cosine[position]
+
+
+@dataclass(frozen=True)
+class _Rays:
+    """Straight lines by their columns: starts, steps from start to end, and lengths."""
+
+    x: Array
+    y: Array
+    z: Array
+    dx: Array
+    dy: Array
+    dz: Array
+    length: Array
+
+    @classmethod
+    def between(cls, start: Array, end: Array) -> _Rays:
+        first, last = np.atleast_2d(start).T, np.atleast_2d(end).T
+        step = np.ascontiguousarray(last - first)
+        x, y, z = np.ascontiguousarray(np.broadcast_to(first, step.shape))
+        length = np.sqrt(np.einsum("ij,ij->j", step, step))
+        return cls(x, y, z, step[0], step[1], step[2], length)
+
+    def left_of(self, corner: Array) -> Flags:
+        """Does a plan point lie to the left of each ray?"""
+        return self.dx * (corner[1] - self.y) - self.dy * (corner[0] - self.x) >= 0.0
 
 
 @dataclass(frozen=True)
@@ -111,145 +163,115 @@ class Enclosure:
 
     def crossings(self, start: Array, end: Array) -> Crossings:
         """Faces met by the straight lines from start (n, 3) to end (n, 3) or (3,)."""
-        start, end = np.broadcast_arrays(np.atleast_2d(start), np.atleast_2d(end))
-        count = len(start)
-        ray = end - start
-        length = np.linalg.norm(ray, axis=1)
-        result = Crossings(
-            np.full((self.face_count, count), np.inf),
-            np.ones((self.face_count, count)),
-            np.ones((self.face_count, count), dtype=bool),
-            np.full((self.face_count, count), SOLID, dtype=np.int64),
-        )
-        enter, leave = self._level_span(start, ray)
-        side_at = self._cross_sides(start, end, ray, length, enter, leave, result)
-        self._cross_level(self.ceiling, self.height, start, ray, length, side_at, result)
-        self._cross_level(self.floor, 0.0, start, ray, length, side_at, result)
+        rays = _Rays.between(start, end)
+        enter, leave = self._level_span(rays)
+        hits: list[FaceHits] = []
+        side_at = self._cross_sides(rays, enter, leave, hits)
+        self._cross_level(self.ceiling, self.height, rays, side_at, hits)
+        self._cross_level(self.floor, 0.0, rays, side_at, hits)
         for k, screen in enumerate(self.screens):
-            self._cross_screen(self.floor + 1 + k, screen, start, ray, length, result)
-        return result
+            self._cross_screen(self.floor + 1 + k, screen, rays, hits)
+        return Crossings(len(rays.x), tuple(hits))
 
-    def _level_span(self, start: Array, ray: Array) -> tuple[Array, Array]:
+    def _level_span(self, rays: _Rays) -> tuple[Array, Array]:
         """Ray parameters between which the ray is level with the room."""
-        rise = ray[:, 2]
-        safe = np.where(rise == 0.0, 1.0, rise)
-        one, two = -start[:, 2] / safe, (self.height - start[:, 2]) / safe
-        level = (start[:, 2] > 0.0) & (start[:, 2] < self.height)
-        flat = rise == 0.0
-        enter = np.where(flat, np.where(level, -np.inf, np.inf), np.minimum(one, two))
-        leave = np.where(flat, np.where(level, np.inf, -np.inf), np.maximum(one, two))
+        flat = rays.dz == 0.0
+        safe = np.where(flat, 1.0, rays.dz)
+        one, two = -rays.z / safe, (self.height - rays.z) / safe
+        enter, leave = np.minimum(one, two), np.maximum(one, two)
+        if flat.any():
+            level = (rays.z > 0.0) & (rays.z < self.height)
+            enter = np.where(flat, np.where(level, -np.inf, np.inf), enter)
+            leave = np.where(flat, np.where(level, np.inf, -np.inf), leave)
         return enter, leave
 
-    def _cross_sides(
-        self,
-        start: Array,
-        end: Array,
-        ray: Array,
-        length: Array,
-        enter: Array,
-        leave: Array,
-        result: Crossings,
-    ) -> Array:
-        """Fill in the sides; returns where the plan view of each ray meets each side, shape (k, n)."""
+    def _cross_sides(self, rays: _Rays, enter: Array, leave: Array, hits: list[FaceHits]) -> list[Array]:
+        """Add the sides; returns where the plan view of each ray meets each side that any meets."""
         corner, along, normal = self._sides
         left: dict[int, Flags] = {}
-        everywhere = np.full((len(corner), len(start)), np.inf)
+        everywhere = []
         for k in range(len(corner)):
-            offset = corner[k] @ normal[k]
-            before = start[:, 0] * normal[k, 0] + start[:, 1] * normal[k, 1] - offset
-            after = end[:, 0] * normal[k, 0] + end[:, 1] * normal[k, 1] - offset
-            met = (before < 0.0) != (after < 0.0)
+            before = (rays.x - corner[k, 0]) * normal[k, 0] + (rays.y - corner[k, 1]) * normal[k, 1]
+            rate = rays.dx * normal[k, 0] + rays.dy * normal[k, 1]
+            met = (before < 0.0) != (before + rate < 0.0)
             if not met.any():
                 continue
-            following = (k + 1) % len(corner)
-            met &= self._left(k, start, ray, left) != self._left(following, start, ray, left)
-            at = np.where(met, before / np.where(met, before - after, 1.0), np.inf)
-            everywhere[k] = at
-            met &= (enter <= at) & (at < leave)
-            result.at[k] = np.where(met, at, np.inf)
-            rate = after - before
-            result.cosine[k] = np.where(met, np.abs(rate) / length, 1.0)
-            result.outward[k] = rate > 0.0
+            for end in (k, (k + 1) % len(corner)):
+                if end not in left:
+                    left[end] = rays.left_of(corner[end])
+            met &= left[k] != left[(k + 1) % len(corner)]
+            at = np.divide(-before, rate, out=np.full(rate.shape, np.inf), where=met)
+            everywhere.append(at)
+            found = np.flatnonzero(met & (enter <= at) & (at < leave))
+            if not found.size:
+                continue
+            place = at[found]
+            mask = np.full(found.size, SOLID, dtype=np.int64)
             if self.holes.get(k):
-                reach = np.where(met, at, 0.0)
-                position = start[:, :2] + reach[:, None] * ray[:, :2]
-                first = (position - corner[k]) @ along[k], start[:, 2] + reach * ray[:, 2]
-                slopes = ray[:, :2] @ along[k], ray[:, 2]
-                self._look_into_holes(k, met, first, slopes, rate, result)
+                x, y = rays.x[found] + place * rays.dx[found], rays.y[found] + place * rays.dy[found]
+                first = (x - corner[k, 0]) * along[k, 0] + (y - corner[k, 1]) * along[k, 1]
+                level = rays.z[found] + place * rays.dz[found]
+                slope = rays.dx[found] * along[k, 0] + rays.dy[found] * along[k, 1]
+                mask = self._through_holes(k, (first, level), (slope, rays.dz[found]), rate[found])
+            cosine = np.abs(rate[found]) / rays.length[found]
+            hits.append(FaceHits(k, found, place, cosine, rate[found] > 0.0, mask))
         return everywhere
 
-    def _left(self, corner: int, start: Array, ray: Array, known: dict[int, Flags]) -> Flags:
-        """Does a corner lie to the left of each ray in the plan? Asked twice per corner, computed once."""
-        if corner not in known:
-            x, y = self.corners[corner]
-            known[corner] = ray[:, 0] * (y - start[:, 1]) - ray[:, 1] * (x - start[:, 0]) >= 0.0
-        return known[corner]
-
     def _cross_level(
-        self,
-        face: int,
-        level: float,
-        start: Array,
-        ray: Array,
-        length: Array,
-        side_at: Array,
-        result: Crossings,
+        self, face: int, level: float, rays: _Rays, side_at: list[Array], hits: list[FaceHits]
     ) -> None:
-        """Fill in the ceiling or the floor."""
-        before, after = start[:, 2] - level, start[:, 2] + ray[:, 2] - level
-        met = (before < 0.0) != (after < 0.0)
-        if not met.any():
+        """Add the ceiling or the floor."""
+        before = rays.z - level
+        met = np.flatnonzero((before < 0.0) != (before + rays.dz < 0.0))
+        if not met.size:
             return
-        at = np.where(met, before / np.where(met, before - after, 1.0), np.inf)
-        changes = np.count_nonzero((side_at > 0.0) & (side_at < at), axis=0)
-        met &= contains(self.corners, start[:, :2]) != (changes % 2 == 1)
-        result.at[face] = np.where(met, at, np.inf)
-        result.cosine[face] = np.where(met, np.abs(ray[:, 2]) / length, 1.0)
-        upward = 1.0 if face == self.ceiling else -1.0
-        result.outward[face] = ray[:, 2] * upward > 0.0
+        at = -before[met] / rays.dz[met]
+        inside = contains(self.corners, np.stack([rays.x[met], rays.y[met]], axis=1))
+        for crossed in side_at:
+            inside ^= (crossed[met] > 0.0) & (crossed[met] < at)
+        found, place = met[inside], at[inside]
+        if not found.size:
+            return
+        rate = rays.dz[found] * (1.0 if face == self.ceiling else -1.0)
+        mask = np.full(found.size, SOLID, dtype=np.int64)
         if self.holes.get(face):
-            position = start[:, :2] + np.where(met, at, 0.0)[:, None] * ray[:, :2]
-            rate = ray[:, 2] * upward
-            self._look_into_holes(
-                face, met, (position[:, 0], position[:, 1]), (ray[:, 0], ray[:, 1]), rate, result
-            )
+            position = rays.x[found] + place * rays.dx[found], rays.y[found] + place * rays.dy[found]
+            mask = self._through_holes(face, position, (rays.dx[found], rays.dy[found]), rate)
+        cosine = np.abs(rate) / rays.length[found]
+        hits.append(FaceHits(face, found, place, cosine, rate > 0.0, mask))
 
-    def _look_into_holes(
-        self,
-        face: int,
-        met: Flags,
-        position: tuple[Array, Array],
-        slopes: tuple[Array, Array],
-        rate: Array,
-        result: Crossings,
-    ) -> None:
-        """Set the masks of rays that pass a hole, wholly or partly, between the inner and the outer plane."""
-        depth = np.where(met, self.thickness[face] / np.where(rate == 0.0, 1.0, rate), 0.0)
+    def _through_holes(
+        self, face: int, position: tuple[Array, Array], slopes: tuple[Array, Array], rate: Array
+    ) -> Ints:
+        """Masks of rays by the holes they pass, wholly or partly, between the inner and the outer plane."""
+        depth = self.thickness[face] / rate
         shift = slopes[0] * depth, slopes[1] * depth
-        mask = np.full(met.shape, SOLID, dtype=np.int64)
+        mask = np.full(rate.shape, SOLID, dtype=np.int64)
         for k, hole in enumerate(self.holes[face]):
             touched, within = _passes(position, shift, hole)
             bit = SOLID << (k + 1)
-            mask = np.where(met & within, bit, np.where(met & touched, mask | bit, mask))
-        result.mask[face] = mask
+            mask = np.where(within, bit, np.where(touched, mask | bit, mask))
+        return mask
 
-    def _cross_screen(
-        self, face: int, screen: Upright, start: Array, ray: Array, length: Array, result: Crossings
-    ) -> None:
-        """Fill in a screen."""
-        a, b = np.array(screen.start), np.array(screen.end)
-        normal = self.normal(face)[:2]
-        left_a = ray[:, 0] * (a[1] - start[:, 1]) - ray[:, 1] * (a[0] - start[:, 0]) >= 0.0
-        left_b = ray[:, 0] * (b[1] - start[:, 1]) - ray[:, 1] * (b[0] - start[:, 0]) >= 0.0
-        before = (start[:, :2] - a) @ normal
-        rate = ray[:, :2] @ normal
-        met = (left_a != left_b) & ((before < 0.0) != (before + rate < 0.0))
-        at = np.where(met, -before / np.where(met, rate, 1.0), 0.0)
-        height = start[:, 2] + at * ray[:, 2]
-        met &= (height >= screen.bottom) & (height < screen.top)
-        result.at[face] = np.where(met, at, np.inf)
-        result.cosine[face] = np.where(met, np.abs(rate) / length, 1.0)
-        result.outward[face] = rate > 0.0
+    def _cross_screen(self, face: int, screen: Upright, rays: _Rays, hits: list[FaceHits]) -> None:
+        """Add a screen."""
+        start, end = np.array(screen.start), np.array(screen.end)
+        normal = self.normal(face)
+        before = (rays.x - start[0]) * normal[0] + (rays.y - start[1]) * normal[1]
+        rate = rays.dx * normal[0] + rays.dy * normal[1]
+        met = (before < 0.0) != (before + rate < 0.0)
+        if not met.any():
+            return
+        met &= rays.left_of(start) != rays.left_of(end)
+        found = np.flatnonzero(met)
+        place = -before[found] / rate[found]
+        level = rays.z[found] + place * rays.dz[found]
+        kept = (level >= screen.bottom) & (level < screen.top)
+        found, place = found[kept], place[kept]
+        if found.size:
+            cosine = np.abs(rate[found]) / rays.length[found]
+            mask = np.full(found.size, SOLID, dtype=np.int64)
+            hits.append(FaceHits(face, found, place, cosine, rate[found] > 0.0, mask))
 
 
 def _passes(position: tuple[Array, Array], shift: tuple[Array, Array], hole: Hole) -> tuple[Flags, Flags]:

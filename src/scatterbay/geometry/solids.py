@@ -55,13 +55,21 @@ class Box(Solid):
         return (np.atleast_2d(np.asarray(points, dtype=float)) - self.centre) @ self.rotation.T
 
     def chord(self, origin: Array, direction: Array) -> tuple[Array, Array]:
-        start, along = self._local(origin), direction @ self.rotation.T
-        with np.errstate(divide="ignore", invalid="ignore"):
-            one, two = (-self.half_sizes - start) / along, (self.half_sizes - start) / along
-        parallel, outside = along == 0.0, np.abs(start) > self.half_sizes
-        near = np.where(parallel, np.where(outside, NOTHING, -NOTHING), np.minimum(one, two))
-        far = np.where(parallel, np.where(outside, -NOTHING, NOTHING), np.maximum(one, two))
-        return _met(near.max(axis=1), far.min(axis=1))
+        offset, steps = (np.atleast_2d(origin) - self.centre).T, np.atleast_2d(direction).T
+        near, far = np.full(steps.shape[1], -NOTHING), np.full(steps.shape[1], NOTHING)
+        for axis, half in zip(self.rotation, self.half_sizes, strict=True):
+            start = axis[0] * offset[0] + axis[1] * offset[1] + axis[2] * offset[2]
+            along = axis[0] * steps[0] + axis[1] * steps[1] + axis[2] * steps[2]
+            parallel = along == 0.0
+            inverse = 1.0 / np.where(parallel, 1.0, along)
+            one, two = (-half - start) * inverse, (half - start) * inverse
+            enter, leave = np.minimum(one, two), np.maximum(one, two)
+            if parallel.any():
+                beside = np.abs(start) > half
+                enter = np.where(parallel, np.where(beside, NOTHING, -NOTHING), enter)
+                leave = np.where(parallel, np.where(beside, -NOTHING, NOTHING), leave)
+            near, far = np.maximum(near, enter), np.minimum(far, leave)
+        return _met(near, far)
 
     def distance(self, points: ArrayLike) -> Array:
         return np.linalg.norm(np.maximum(np.abs(self._local(points)) - self.half_sizes, 0.0), axis=1)
