@@ -104,11 +104,32 @@ def build_scene(scenario: Scenario) -> Scene:
         for p in scenario.places
     )
     beams = tuple(_beam(beam, outputs[beam.source], scenario, defined) for beam in scenario.beams)
-    assumptions = tuple(a for output in outputs.values() for a in output.assumptions)
+    assumptions = (*(a for output in outputs.values() for a in output.assumptions), *_general(beams))
     return Scene(
         Surroundings(bodies, walls, rungs), beams, places, scenario.options.seed, scenario.options.primary_by_plane,
         assumptions,
     )  # fmt: skip
+
+
+def _general(beams: Iterable[SceneBeam]) -> tuple[Assumption, ...]:
+    """What holds for every bay."""
+    notes = [
+        Assumption("air", "The air between source, bodies and places is left out: a few per cent either way."),
+        Assumption(
+            "stray radiation",
+            "Scatter and leakage are taken to flood a barrier: its transmission is that of an unbounded plane.",
+        ),
+    ]
+    housed = [beam for beam in beams if beam.leakage is not None]
+    for name, housing in {b.source: b.leakage for b in housed if b.leakage is not None}.items():
+        notes.append(
+            Assumption(
+                "leakage",
+                f"source '{name}': the stated leakage goes evenly in all directions, hardened by "
+                f"{1e3 * housing.thickness:.3g} mm of {housing.material.name}, whenever a beam is on",
+            )
+        )
+    return tuple(notes)
 
 
 def _outside(room: Enclosure, at: Sequence[float]) -> bool:
