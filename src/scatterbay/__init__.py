@@ -9,16 +9,16 @@ from typing import TYPE_CHECKING, Any
 
 __version__ = "0.1.0"
 
-__all__ = ["__version__", "assess", "load", "table"]
+__all__ = ["__version__", "assess", "barrier", "load", "source", "table"]
 
 if TYPE_CHECKING:
-    from scatterbay.api import assess, table
+    from scatterbay.api import assess, barrier, source, table
     from scatterbay.scenario import load
 
 
 def __getattr__(name: str) -> Any:
     """Import on first use, so that asking for the version costs nothing."""
-    if name in ("assess", "table"):
+    if name in ("assess", "barrier", "source", "table"):
         from scatterbay import api
 
         return getattr(api, name)

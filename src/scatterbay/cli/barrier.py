@@ -2,15 +2,9 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING, Annotated
+from typing import Annotated
 
 import typer
-
-if TYPE_CHECKING:
-    from scatterbay.engine.single import PatchGeometry
-    from scatterbay.report.barrier import Published
-    from scatterbay.scenario.beam_text import NamedBeam
-    from scatterbay.scenario.parts import MakeUp
 
 
 def command(
@@ -42,82 +36,17 @@ def command(
 
     Example: scatterbay barrier --beam "X-ray 150 kV, aluminium 3 mm" --layers "gypsum board 12.5 mm + lead 1.5 mm"
     """
-    from scatterbay.barriers.makeup import sheet
+    from scatterbay.api import barrier
     from scatterbay.cli.output import one_format, put
-    from scatterbay.engine.named import spectrum_of
-    from scatterbay.engine.single import transmission
-    from scatterbay.report.barrier import BarrierReport, barrier_record, barrier_rows, show_barrier
-    from scatterbay.scenario import make_up
-    from scatterbay.scenario.beam_text import named_beam
-    from scatterbay.units import read
+    from scatterbay.report.barrier import barrier_record, barrier_rows, show_barrier
 
     one_format(json, csv)
-    named, built = named_beam(beam), make_up(layers)
-    tilt = read(angle, "angle")
-    patch = _patch(field, source_distance, point_distance)
-    sheets = tuple(sheet(layer.material, layer.thickness.value) for layer in built.layers)
-    found = transmission(spectrum_of(named), sheets, tilt.value, patch)
-    report = BarrierReport(
-        named.text,
-        built.text,
-        angle,
-        f"{field} at {source_distance} from the source; point {point_distance} behind" if patch else "",
-        built.layers[-1].material,
-        found,
-        _published(named, built, tilt.value),
-        _notes(named, found.patch is not None),
-    )
+    found = barrier(beam, layers, angle, field, source_distance, point_distance)
     put(
         json,
         csv,
-        lambda: barrier_record(report),
-        lambda: barrier_rows(report),
-        lambda s: show_barrier(report, s),
+        lambda: barrier_record(found),
+        lambda: barrier_rows(found),
+        lambda s: show_barrier(found, s),
     )
     return 0
-
-
-def _patch(field: str, source: str, point: str) -> PatchGeometry | None:
-    from scatterbay.engine.single import PatchGeometry
-    from scatterbay.errors import UsageError
-    from scatterbay.units import read
-
-    if not field and not source and not point:
-        return None
-    if not (field and source and point):
-        raise UsageError("a lit patch needs all three: --field, --source-distance and --point-distance")
-    sides = [read(side, "length").value for side in field.split("x")]
-    distances = read(source, "length").value, read(point, "length").value
-    if len(sides) > 2 or min(*sides, *distances) <= 0.0:
-        raise UsageError(f"field '{field}' and distances must be lengths above 0, the field one side or two")
-    return PatchGeometry(sides[0], sides[-1], *distances)
-
-
-def _published(beam: NamedBeam, layers: MakeUp, angle: float) -> Published | None:
-    """The published fit for the same beam and a single layer of the same material, where there is one."""
-    from scatterbay.report.barrier import Published
-    from scatterbay.tables.fits import fits
-
-    if len(layers.layers) != 1 or angle != 0.0:
-        return None
-    layer = layers.layers[0]
-    for fit in fits():
-        same = (
-            beam.voltage == fit.voltage
-            if beam.voltage
-            else abs((beam.energy_kev or 0.0) - fit.energy_kev) < 0.5
-        )
-        if same and layer.material == fit.material:
-            return Published(fit.transmission(layer.thickness.value), fit.beam, fit.source)
-    return None
-
-
-def _notes(beam: NamedBeam, with_patch: bool) -> tuple[str, ...]:
-    notes = ["Stray radiation floods a barrier: judge it by the plane figure. A primary beam lights a patch."]
-    if not with_patch:
-        notes.append("No patch: give --field, --source-distance and --point-distance.")
-    if beam.voltage:
-        notes.append("The spectrum is the tube model's, at constant potential, anode angle 20 deg.")
-    if beam.nuclide:
-        notes.append("Lines below 20 keV are taken as stopped in the capsule.")
-    return tuple(notes)

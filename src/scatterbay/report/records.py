@@ -2,15 +2,12 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING, Any
+from typing import Any
 
 from scatterbay import __version__
 from scatterbay.exposure.results import TIME_BASES, Assessment, Figure, GoalResult, PathShare, PlaceResult
 from scatterbay.report.cautions import CAUTIONS, NOT_COVERED
 from scatterbay.report.words import in_unit, unit
-
-if TYPE_CHECKING:
-    import pandas as pd
 
 FORMAT = 1
 """Version of the JSON and CSV layout."""
@@ -140,13 +137,3 @@ def _row(place: PlaceResult, figure: Figure, goal: GoalResult | None) -> dict[st
         "verdict": goal.verdict if goal else "",
         "place_verdict": place.verdict,
     }
-
-
-def assessment_frame(assessment: Assessment) -> pd.DataFrame:
-    """The rows as a pandas table; cautions and assumptions in its ``attrs``."""
-    import pandas as pd
-
-    frame = pd.DataFrame(assessment_rows(assessment))
-    frame.attrs["cautions"] = list(CAUTIONS)
-    frame.attrs["assumptions"] = [a.text for a in assessment.assumptions]
-    return frame

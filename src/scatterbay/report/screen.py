@@ -17,7 +17,13 @@ IN_A_PIPE = 100
 WIDEST = 400
 """Room that a table is laid out in, so that no cell is ever wrapped or cut."""
 
-STYLES = {"above": "bold reverse", "too close to call": "bold", "too close": "bold", "below": "", "no goal": "dim"}
+STYLES = {
+    "above": "bold reverse",
+    "too close to call": "bold",
+    "too close": "bold",
+    "below": "",
+    "no goal": "dim",
+}
 """How verdicts stand out on a terminal; the word itself always says it."""
 
 
