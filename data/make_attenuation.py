@@ -43,11 +43,7 @@ def header(title: str, gaps: str) -> dict[str, str]:
 
 
 def main(where: Path = HERE) -> None:
-    elements = [
-        (z, *row)
-        for z in range(1, 93)
-        for row in raw_rows(RAW / "elements" / f"z{z:02d}.csv")
-    ]
+    elements = [(z, *row) for z in range(1, 93) for row in raw_rows(RAW / "elements" / f"z{z:02d}.csv")]
     write_table(
         "attenuation.csv",
         header("Photon mass attenuation and mass energy-absorption coefficients of the elements", "none"),

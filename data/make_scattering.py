@@ -48,7 +48,9 @@ def line_groups(z: int) -> list[str]:
             continue
         group = next(g for g, starts in K_GROUPS.items() if name[:3] in starts or name[:2] in starts)
         try:
-            lines[group].append((xraylib.LineEnergy(z, getattr(xraylib, name)), xraylib.RadRate(z, getattr(xraylib, name))))
+            lines[group].append(
+                (xraylib.LineEnergy(z, getattr(xraylib, name)), xraylib.RadRate(z, getattr(xraylib, name)))
+            )
         except ValueError:
             continue
     total = sum(rate for group in lines.values() for _, rate in group)

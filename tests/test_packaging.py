@@ -50,14 +50,28 @@ def test_wheel_answers_away_from_the_checkout(wheel: Path, tmp_path: Path) -> No
     )
     environment = {**os.environ, "PYTHONPATH": str(tmp_path / "site")}
     done = subprocess.run(
-        [sys.executable, "-P", "-c", program], cwd=tmp_path, capture_output=True, text=True, check=False, env=environment
+        [sys.executable, "-P", "-c", program],
+        cwd=tmp_path,
+        capture_output=True,
+        text=True,
+        check=False,
+        env=environment,
     )
     assert done.returncode == 0, done.stderr
     assert done.stdout.splitlines() == [str(tmp_path / "site" / "scatterbay" / "__init__.py"), "True"]
 
 
 def test_top_level_holds_only_what_was_agreed() -> None:
-    agreed = {"pyproject.toml", "README.md", "DEVELOPERS.md", "SAFETY.md", "src", "data", "tests", "scenarios"}
+    agreed = {
+        "pyproject.toml",
+        "README.md",
+        "DEVELOPERS.md",
+        "SAFETY.md",
+        "src",
+        "data",
+        "tests",
+        "scenarios",
+    }
     names = {name.split("/")[0] for name in tracked(".")}
     if not (TOP / ".git").exists():
         pytest.skip("not a checkout: build folders may lie here")
@@ -73,5 +87,7 @@ def test_start_up_imports_neither_pandas_nor_scipy() -> None:
         "    run()\n"
         "print(sorted({m.split('.')[0] for m in sys.modules} & {'pandas', 'scipy', 'matplotlib'}))\n"
     )
-    done = subprocess.run([sys.executable, "-c", program], cwd=TOP, capture_output=True, text=True, check=False)
+    done = subprocess.run(
+        [sys.executable, "-c", program], cwd=TOP, capture_output=True, text=True, check=False
+    )
     assert done.stdout.strip() == "[]", done.stderr

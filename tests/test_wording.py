@@ -8,7 +8,9 @@ from pathlib import Path
 import pytest
 
 TOP = Path(__file__).parents[1]
-PROMISES = re.compile(r"\b(is|are|stay|stays|be) safe\b|\bsafe (to|for|dose|level|limit)\b|\bsafely\b", re.IGNORECASE)
+PROMISES = re.compile(
+    r"\b(is|are|stay|stays|be) safe\b|\bsafe (to|for|dose|level|limit)\b|\bsafely\b", re.IGNORECASE
+)
 
 
 @pytest.mark.parametrize("folder", ["src", "scenarios", "data"])

@@ -55,7 +55,9 @@ def computed(scenario: Scenario) -> Contributions:
     return contributions(build_scene(scenario))
 
 
-def moved(scenario: Scenario, at: Callable[[Point], Point], turn: float = 0.0, mirror: bool = False) -> Scenario:
+def moved(
+    scenario: Scenario, at: Callable[[Point], Point], turn: float = 0.0, mirror: bool = False
+) -> Scenario:
     """The scenario with every point sent through ``at``, which turns by ``turn`` [rad] and may mirror x."""
 
     def plan(point: tuple[float, float]) -> tuple[float, float]:

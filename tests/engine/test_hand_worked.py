@@ -63,7 +63,9 @@ def test_bare_source_by_inverse_square() -> None:
 def test_decay_over_one_half_life() -> None:
     """Ir-192, 73.83 days (LNHB): after 74 days 2^(-74/73.83) = 0.4992 of the activity is left."""
     later = GAMMA.replace("assessed on: 2030-01-01", "assessed on: 2030-03-16")
-    ratio = rate(computed(loads(later, "a")), "yard", "primary") / rate(computed(loads(GAMMA, "b")), "yard", "primary")
+    ratio = rate(computed(loads(later, "a")), "yard", "primary") / rate(
+        computed(loads(GAMMA, "b")), "yard", "primary"
+    )
     assert ratio == pytest.approx(2.0 ** (-74.0 / 73.83), rel=1e-4)
 
 
@@ -139,8 +141,14 @@ def test_leakage_through_equal_floors_is_equal_up_and_down() -> None:
 
 def test_pencil_beam_unshielded_by_inverse_square() -> None:
     """A measured output of 6 mGy m2/(mA min) at 5 mA is 1.8 Gy m2/h: 1.8e6 / 3.35^2 = 1.60e5 uGy/h at 3.35 m."""
-    text = FLOORS.replace("{CEILING}", "open").replace("{FLOOR}", "air 1 mm").replace("east: concrete 300 mm", "east: open")
-    text = text.replace("leakage: 1 mGy/h at 1 m", "output: 6 mGy m2/(mA min)").replace("cone 10 deg", "cone 1 deg")
+    text = (
+        FLOORS.replace("{CEILING}", "open")
+        .replace("{FLOOR}", "air 1 mm")
+        .replace("east: concrete 300 mm", "east: open")
+    )
+    text = text.replace("leakage: 1 mGy/h at 1 m", "output: 6 mGy m2/(mA min)").replace(
+        "cone 10 deg", "cone 1 deg"
+    )
     text += "  in line: {at: [6.35, 2.5, 1.2], people: others, occupancy: 1}\n"
     found = computed(loads(text, "pencil"))
     assert rate(found, "in line", "primary") == pytest.approx(1.8e6 / 3.35**2, rel=1e-6)
@@ -150,10 +158,14 @@ def test_use_factor_enters_week_and_year_of_the_primary_only() -> None:
     full = GAMMA
     tenth = GAMMA.replace("use factor: 1", "use factor: 0.1")
     for name in ("rate", "hour", "day"):
-        values = [next(p for p in assessed(t).places if p.name == "yard").figure(name).value for t in (full, tenth)]
+        values = [
+            next(p for p in assessed(t).places if p.name == "yard").figure(name).value for t in (full, tenth)
+        ]
         assert values[0] == pytest.approx(values[1])
     for name in ("week", "year"):
-        values = [next(p for p in assessed(t).places if p.name == "yard").figure(name).value for t in (full, tenth)]
+        values = [
+            next(p for p in assessed(t).places if p.name == "yard").figure(name).value for t in (full, tenth)
+        ]
         assert values[1] / values[0] == pytest.approx(0.1)
 
 

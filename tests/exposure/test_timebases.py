@@ -46,7 +46,10 @@ def scenario_with(extra: str) -> list[list[str]]:
 
 def test_sources_run_together_unless_declared_exclusive() -> None:
     assert sorted(scenario_with("")) == [["again", "shot"], ["delta"], ["gamma"]]
-    assert sorted(scenario_with("never together: [[gamma, delta]]\n")) == [["again", "shot"], ["delta", "gamma"]]
+    assert sorted(scenario_with("never together: [[gamma, delta]]\n")) == [
+        ["again", "shot"],
+        ["delta", "gamma"],
+    ]
 
 
 def test_an_exclusive_group_that_splits_a_source_is_not_used_to_lower_anything() -> None:
