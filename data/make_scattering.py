@@ -55,9 +55,9 @@ def line_groups(z: int) -> list[str]:
             continue
     total = sum(rate for group in lines.values() for _, rate in group)
     cells = []
-    for group in lines.values():
-        share = sum(rate for _, rate in group)
-        mean = sum(energy * rate for energy, rate in group) / share if share else 0.0
+    for found in lines.values():
+        share = sum(rate for _, rate in found)
+        mean = sum(energy * rate for energy, rate in found) / share if share else 0.0
         cells += [f"{mean:.3f}", f"{share / total:.4f}"]
     return cells
 

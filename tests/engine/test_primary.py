@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import itertools
+
 import numpy as np
 import pytest
 
@@ -28,7 +30,7 @@ def test_patch_grows_with_the_field_from_the_uncollided_beam_to_the_plane() -> N
     plane = transmission(TUBE, CONCRETE)
     values = [patch(side) for side in (0.005, 0.1, 0.4, 1.0, 3.0, 8.0)]
     assert values[0] == pytest.approx(float(plane.uncollided[0]), rel=0.02)
-    assert all(a <= b * (1 + 1e-9) for a, b in zip(values, values[1:], strict=False))
+    assert all(a <= b * (1 + 1e-9) for a, b in itertools.pairwise(values))
     assert values[-1] == pytest.approx(float(plane.plane[0]), rel=1e-3)
 
 
