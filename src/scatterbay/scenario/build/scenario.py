@@ -1,0 +1,115 @@
+"""The whole scenario, from the file as written."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+
+from scatterbay.scenario import parts
+from scatterbay.scenario.build.beams import build_beams, check_not_buried
+from scatterbay.scenario.build.bodies import build_bodies, check_bodies, solids_of
+from scatterbay.scenario.build.findings import Findings, Section, names_in, usable, whole
+from scatterbay.scenario.build.materials import build_materials
+from scatterbay.scenario.build.people import build_people
+from scatterbay.scenario.build.places import build_places, check_places
+from scatterbay.scenario.build.room import build_room
+from scatterbay.scenario.build.sources import build_sources
+from scatterbay.scenario.build.workload import build_workloads
+from scatterbay.scenario.model.document import NAMED, NAMED_IN_ROOM, Document
+
+LONGEST_NAME = 60
+_NEEDED = ("sources", "beams", "workload", "people", "places")
+
+
+def build(document: Document, path: str, text: str, sha256: str, findings: Findings) -> parts.Scenario | None:
+    """The scenario; every problem met on the way is noted in ``findings``. None where the room is missing."""
+    _check_names(document, findings)
+    materials = build_materials(document, findings)
+    written_room = whole(document.room)
+    room = build_room(written_room, findings) if written_room else None
+    bodies = build_bodies(document, findings)
+    sources = build_sources(document, findings)
+    people = build_people(document, findings)
+    places = build_places(document, room, findings)
+    beams = build_beams(document, room, _targets(document, bodies, places), findings)
+    workloads = build_workloads(document, {beam.name: beam for beam in beams}, _currents(sources), findings)
+    solids = solids_of(bodies)
+    check_bodies(solids, room, findings)
+    check_not_buried(beams, bodies, solids, findings)
+    check_places(places, room, solids, beams, findings)
+    together = _never_together(document, findings)
+    options = _options(document, findings)
+    if not bodies:
+        findings.assume("bodies", "No bodies are given: nothing in the room scatters the beam")
+    if room is None:
+        return None
+    return parts.Scenario(
+        path,
+        text,
+        sha256,
+        whole(document.title) or "",
+        whole(document.drawing) or "",
+        room,
+        bodies,
+        sources,
+        beams,
+        workloads,
+        people,
+        places,
+        together,
+        materials,
+        options,
+        findings.assumptions,
+    )
+
+
+def _check_names(document: Document, findings: Findings) -> None:
+    """Names are printed in tables and drawings: short, on one line, and no two things to aim at alike."""
+    named: list[tuple[tuple[str, ...], Section[object]]]
+    named = [((section,), getattr(document, section)) for section in NAMED]
+    room = whole(document.room)
+    named += [(("room", section), getattr(room, section)) for section in NAMED_IN_ROOM if room]
+    for path, section in named:
+        for name in names_in(section) or ():
+            if len(name) > LONGEST_NAME or not name.isprintable() or name != name.strip():
+                message = f"'{name[:20]}...' cannot be a name" if len(name) > LONGEST_NAME else f"{name!r} cannot be a name"
+                hint = f"a name is one line of up to {LONGEST_NAME} characters"
+                findings.wrong((*path, name), message, hint, on_key=True)
+        if path[0] in _NEEDED and names_in(section) == ():
+            findings.wrong(path, f"there are no {path[0]}", "give one at least", on_key=True)
+    for name in names_in(document.places) or ():
+        if name in (names_in(document.bodies) or ()):
+            message = f"'{name}' is a body as well"
+            findings.wrong(("places", name), message, "beams are aimed by name: rename one", on_key=True)
+
+
+def _targets(
+    document: Document, bodies: tuple[parts.Body, ...], places: tuple[parts.Place, ...]
+) -> Mapping[str, parts.Point | None]:
+    """What a beam may be aimed at by name, and where it is; None where that could not be told."""
+    named = [*(names_in(document.bodies) or ()), *(names_in(document.places) or ())]
+    known = {body.name: body.centre for body in bodies} | {place.name: place.at for place in places}
+    return {name: known.get(name) for name in named}
+
+
+def _currents(sources: tuple[parts.Source, ...]) -> dict[str, float]:
+    return {s.name: s.current.value if isinstance(s, parts.XrayTube) else 0.0 for s in sources}
+
+
+def _never_together(document: Document, findings: Findings) -> tuple[tuple[str, ...], ...]:
+    lists = whole(document.never_together) or ()
+    beams = names_in(document.beams)
+    for i, names in enumerate(lists):
+        for j, name in enumerate(names):
+            if beams is not None and name not in beams:
+                findings.unknown(("never together", i, j), "beam", name, beams)
+    return lists
+
+
+def _options(document: Document, findings: Findings) -> parts.Options:
+    options = whole(document.options)
+    if options is None or options.primary_by is None:
+        findings.assume("primary", "Primary beams are judged on the patch they light")
+    if options is None:
+        return parts.Options()
+    seed = parts.Options.seed if options.seed is None else options.seed
+    return parts.Options(options.primary_by == "plane", seed)
