@@ -6,6 +6,7 @@ import contextlib
 import os
 import tempfile
 from pathlib import Path
+from zipfile import BadZipFile
 
 from scatterbay.barriers.answer import Answer, build_answer
 from scatterbay.barriers.makeup import Sheets, content_key, merged
@@ -52,7 +53,7 @@ def _from_disk(sheets: Sheets) -> Answer | None:
         return None
     try:
         return Answer.from_bytes(path.read_bytes(), sheets)
-    except (OSError, ValueError, KeyError, EOFError):
+    except (OSError, ValueError, KeyError, EOFError, BadZipFile):
         return None
 
 

@@ -114,7 +114,9 @@ def build_scene(scenario: Scenario) -> Scene:
 def _general(beams: Iterable[SceneBeam]) -> tuple[Assumption, ...]:
     """What holds for every bay."""
     notes = [
-        Assumption("air", "The air between source, bodies and places is left out: a few per cent either way."),
+        Assumption(
+            "air", "The air between source, bodies and places is left out: a few per cent either way."
+        ),
         Assumption(
             "stray radiation",
             "Scatter and leakage are taken to flood a barrier: its transmission is that of an unbounded plane.",

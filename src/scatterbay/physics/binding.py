@@ -42,7 +42,9 @@ class IncoherentShape:
     @cached_property
     def _log_nodes(self) -> tuple[Array, Array]:
         x = scattering.momentum_nodes()
-        s = np.sum([w / atomic_weight(z) * scattering.incoherent_function(z) for z, w in self.fractions], axis=0)
+        s = np.sum(
+            [w / atomic_weight(z) * scattering.incoherent_function(z) for z, w in self.fractions], axis=0
+        )
         first = np.array([x[0] * 1e-4])
         x, s = np.concatenate([first, x]), np.concatenate([[s[0] * 1e-8], s])
         return np.log(x), np.log(AVOGADRO * s)

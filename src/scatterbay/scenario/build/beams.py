@@ -74,7 +74,9 @@ def _aim(
     if isinstance(beam.aim, str):
         if beam.aim not in targets and beam.aim not in DIRECTIONS:
             if all_named:
-                findings.unknown((*path, "aim"), "body, place or direction", beam.aim, [*targets, *DIRECTIONS])
+                findings.unknown(
+                    (*path, "aim"), "body, place or direction", beam.aim, [*targets, *DIRECTIONS]
+                )
             return None
         dx, dy, dz = DIRECTIONS.get(beam.aim, (0.0, 0.0, 0.0))
         aim = targets[beam.aim] if beam.aim in targets else (x + dx, y + dy, z + dz)
@@ -130,4 +132,6 @@ def _check_sources_used(document: Document, sources: Sequence[str] | None, findi
         return
     for name in sources:
         if name not in used:
-            findings.wrong(("sources", name), f"no beam uses '{name}'", "add a beam, or take it out", on_key=True)
+            findings.wrong(
+                ("sources", name), f"no beam uses '{name}'", "add a beam, or take it out", on_key=True
+            )

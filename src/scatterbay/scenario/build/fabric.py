@@ -29,7 +29,9 @@ def fabric_at(point: Point, room: Room) -> str | None:
 def _wall_at(where: tuple[float, float], sides: tuple[Side, ...]) -> str | None:
     """The wall that a point outside the outline lies inside of, corners included."""
     spots = [_along_and_out(where, side) for side in sides]
-    within = [_CLOSE < out < side.make_up.thickness - _CLOSE for (_, out), side in zip(spots, sides, strict=True)]
+    within = [
+        _CLOSE < out < side.make_up.thickness - _CLOSE for (_, out), side in zip(spots, sides, strict=True)
+    ]
     lengths = [math.dist(side.start, side.end) for side in sides]
     for i, side in enumerate(sides):
         along = spots[i][0]

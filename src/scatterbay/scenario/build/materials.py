@@ -27,7 +27,9 @@ def build_materials(document: Document, findings: Findings) -> tuple[parts.Mater
             findings.wrong(path, message, "start with a letter and do without '+'", on_key=True)
         if (entry.mass_fractions is None) == (entry.formula is None):
             said = "both mass fractions and a formula are given" if entry.formula else "it has no composition"
-            findings.wrong(path, said, "give 'mass fractions: {Ca: 0.4, ...}' or 'formula: CaWO4'", on_key=True)
+            findings.wrong(
+                path, said, "give 'mass fractions: {Ca: 0.4, ...}' or 'formula: CaWO4'", on_key=True
+            )
             continue
         fractions = entry.mass_fractions or entry.formula or {}
         total = sum(fractions.values())

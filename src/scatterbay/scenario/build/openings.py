@@ -16,7 +16,10 @@ _CLOSE = 1e-9
 
 
 def build_openings(
-    room: written.Room, sides: Sequence[parts.Side] | None, corners: Sequence[Point] | None, findings: Findings
+    room: written.Room,
+    sides: Sequence[parts.Side] | None,
+    corners: Sequence[Point] | None,
+    findings: Findings,
 ) -> tuple[parts.Opening, ...]:
     """Every opening that lies where it can."""
     found = []
@@ -32,7 +35,11 @@ def build_openings(
 
 
 def _in_side(
-    name: str, opening: written.SideOpening, room: written.Room, sides: Sequence[parts.Side] | None, findings: Findings
+    name: str,
+    opening: written.SideOpening,
+    room: written.Room,
+    sides: Sequence[parts.Side] | None,
+    findings: Findings,
 ) -> parts.Opening | None:
     path = ("room", "openings", name)
     known = None if isinstance(room.sides, Broken) else [*room.sides, *written.FLAT]
@@ -71,7 +78,9 @@ def _flat(
         inside = contains(corners, points) | (distance_to_edges(corners, points) <= _CLOSE)
         pierced = any(low[0] < x < high[0] and low[1] < y < high[1] for x, y in corners)
         if pierced or not inside.all():
-            findings.wrong(path, f"'{name}' reaches beyond the outline of the room", "move or shrink it", on_key=True)
+            findings.wrong(
+                path, f"'{name}' reaches beyond the outline of the room", "move or shrink it", on_key=True
+            )
             return None
     return parts.Opening(name, opening.in_, low, high, opening.make_up)
 
@@ -79,11 +88,14 @@ def _flat(
 def _check_overlaps(openings: Sequence[parts.Opening], findings: Findings) -> None:
     for one, other in combinations(openings, 2):
         apart = any(
-            one.high[axis] <= other.low[axis] + _CLOSE or other.high[axis] <= one.low[axis] + _CLOSE for axis in (0, 1)
+            one.high[axis] <= other.low[axis] + _CLOSE or other.high[axis] <= one.low[axis] + _CLOSE
+            for axis in (0, 1)
         )
         if one.host == other.host and not apart:
             message = f"'{other.name}' overlaps '{one.name}' in '{one.host}'"
-            findings.wrong(("room", "openings", other.name), message, "move or shrink one of them", on_key=True)
+            findings.wrong(
+                ("room", "openings", other.name), message, "move or shrink one of them", on_key=True
+            )
 
 
 def build_screens(room: written.Room, findings: Findings) -> tuple[parts.Screen, ...]:
@@ -96,7 +108,9 @@ def build_screens(room: written.Room, findings: Findings) -> tuple[parts.Screen,
             findings.assume("screens", "Standing on the floor (no bottom given)", name)
         bottom, top = screen.bottom.value if screen.bottom else 0.0, screen.top.value
         if math.dist(screen.from_, screen.to) < 1e-3:
-            findings.wrong((*path, "to"), f"'{name}' has no length", "'from' and 'to' are its two ends on plan")
+            findings.wrong(
+                (*path, "to"), f"'{name}' has no length", "'from' and 'to' are its two ends on plan"
+            )
         elif top <= bottom:
             findings.wrong((*path, "top"), f"the top of '{name}' is not above its bottom", "")
         elif height and top > height.value + _CLOSE:

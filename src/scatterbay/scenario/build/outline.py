@@ -36,7 +36,9 @@ def sound_corners(room: Room, findings: Findings) -> tuple[Point, ...] | None:
             findings.wrong((*path, following), message, "the last corner joins the first by itself")
             sound = False
     if sound and crosses_itself(corners):
-        findings.wrong(path, "the outline crosses or touches itself", "list the corners in order around the room")
+        findings.wrong(
+            path, "the outline crosses or touches itself", "list the corners in order around the room"
+        )
         return None
     if sound and signed_area(corners) < 0.0:
         turned = [list(corner) for corner in reversed(corners)]
@@ -47,7 +49,9 @@ def sound_corners(room: Room, findings: Findings) -> tuple[Point, ...] | None:
     return corners if sound else None
 
 
-def build_sides(room: Room, corners: Sequence[Point] | None, findings: Findings) -> tuple[parts.Side, ...] | None:
+def build_sides(
+    room: Room, corners: Sequence[Point] | None, findings: Findings
+) -> tuple[parts.Side, ...] | None:
     """The sides along the outline, if there is one for each and all could be read."""
     if isinstance(room.sides, Broken) or corners is None:
         return None

@@ -15,7 +15,9 @@ def build_people(document: Document, findings: Findings) -> tuple[parts.People, 
         for i, goal in enumerate(entry.goals):
             same = (goal.time_base, goal.quantity)
             if same in seen:
-                message = f"'{goal.text}' and '{seen[same]}' are both goals for the same time base and quantity"
+                message = (
+                    f"'{goal.text}' and '{seen[same]}' are both goals for the same time base and quantity"
+                )
                 findings.wrong(("people", name, "goals", i), message, "keep the lower one")
             seen[same] = goal.text
         found.append(parts.People(name, entry.area, entry.goals))

@@ -113,7 +113,9 @@ def _beyond(
     normal, length = outward(side.start, side.end), math.dist(side.start, side.end)
     out, share = side.make_up.thickness + gap, along / length
     x, y = (side.start[i] + share * (side.end[i] - side.start[i]) + out * normal[i] for i in (0, 1))
-    how = f"{gap:.4g} m beyond the outer face of {entry.beyond}, {along:.4g} m along {side.name}, {up:.4g} m up"
+    how = (
+        f"{gap:.4g} m beyond the outer face of {entry.beyond}, {along:.4g} m along {side.name}, {up:.4g} m up"
+    )
     return (x, y, up), how
 
 
@@ -167,10 +169,16 @@ def check_places(
         for name, outer in solids.items():
             distance = float(outer[0].distance(np.array([place.at]))[0])
             if distance < NEAREST:
-                said = f"lies inside '{name}'" if distance == 0.0 else f"is {1000 * distance:.0f} mm from '{name}'"
+                said = (
+                    f"lies inside '{name}'"
+                    if distance == 0.0
+                    else f"is {1000 * distance:.0f} mm from '{name}'"
+                )
                 hint = f"stay {1000 * NEAREST:.0f} mm or more away from bodies"
                 findings.wrong(path, f"the place at {where} {said}", hint, on_key=True)
         for beam in beams:
             if math.dist(beam.at, place.at) < NEAREST:
                 hint = f"stay {1000 * NEAREST:.0f} mm or more away from sources"
-                findings.wrong(path, f"the place at {where} is where '{beam.name}' comes from", hint, on_key=True)
+                findings.wrong(
+                    path, f"the place at {where} is where '{beam.name}' comes from", hint, on_key=True
+                )

@@ -51,9 +51,11 @@ def build_room(room: written.Room, findings: Findings) -> parts.Room | None:
 
 def _check_names(room: written.Room, findings: Findings) -> None:
     """Sides, openings and screens are called by name in one breath, so the names must differ."""
-    seen: dict[str, str] = {name: "part of every room" for name in written.FLAT}
+    seen: dict[str, str] = dict.fromkeys(written.FLAT, "part of every room")
     for section in ("sides", "openings", "screens"):
         for name in getattr(room, section) if not isinstance(getattr(room, section), Broken) else ():
             if name in seen:
-                findings.wrong(("room", section, name), f"'{name}' is already {seen[name]}", "rename one", on_key=True)
+                findings.wrong(
+                    ("room", section, name), f"'{name}' is already {seen[name]}", "rename one", on_key=True
+                )
             seen.setdefault(name, f"one of the {section}")

@@ -7,7 +7,7 @@ from collections.abc import Mapping
 from scatterbay.scenario import parts
 from scatterbay.scenario.build.beams import build_beams, check_not_buried
 from scatterbay.scenario.build.bodies import build_bodies, check_bodies, solids_of
-from scatterbay.scenario.build.findings import Findings, Section, names_in, usable, whole
+from scatterbay.scenario.build.findings import Findings, Section, names_in, whole
 from scatterbay.scenario.build.materials import build_materials
 from scatterbay.scenario.build.people import build_people
 from scatterbay.scenario.build.places import build_places, check_places
@@ -71,7 +71,11 @@ def _check_names(document: Document, findings: Findings) -> None:
     for path, section in named:
         for name in names_in(section) or ():
             if len(name) > LONGEST_NAME or not name.isprintable() or name != name.strip():
-                message = f"'{name[:20]}...' cannot be a name" if len(name) > LONGEST_NAME else f"{name!r} cannot be a name"
+                message = (
+                    f"'{name[:20]}...' cannot be a name"
+                    if len(name) > LONGEST_NAME
+                    else f"{name!r} cannot be a name"
+                )
                 hint = f"a name is one line of up to {LONGEST_NAME} characters"
                 findings.wrong((*path, name), message, hint, on_key=True)
         if path[0] in _NEEDED and names_in(section) == ():

@@ -19,7 +19,11 @@ def build_sources(document: Document, findings: Findings) -> tuple[parts.Source,
     entries: dict[str, written.XrayTube | written.SealedSource] = usable(document.sources)
     found: list[parts.Source] = []
     for name, entry in entries.items():
-        made = _tube(name, entry, findings) if isinstance(entry, written.XrayTube) else _sealed(name, entry, findings)
+        made = (
+            _tube(name, entry, findings)
+            if isinstance(entry, written.XrayTube)
+            else _sealed(name, entry, findings)
+        )
         found += [made] if made else []
     return tuple(found)
 
@@ -28,7 +32,11 @@ def _tube(name: str, entry: written.XrayTube, findings: Findings) -> parts.XrayT
     path = ("sources", name)
     layer = entry.half_value_layer
     if (entry.filtration is None) == (layer is None):
-        said = "both a filtration and a half-value layer are given" if layer else "nothing says how the beam is filtered"
+        said = (
+            "both a filtration and a half-value layer are given"
+            if layer
+            else "nothing says how the beam is filtered"
+        )
         hint = "give 'filtration: aluminium 3 mm' or a measured 'half-value layer: aluminium 3.2 mm'"
         findings.wrong(path, said, hint, on_key=True)
         return None
@@ -38,7 +46,9 @@ def _tube(name: str, entry: written.XrayTube, findings: Findings) -> parts.XrayT
     if angle is None:
         angle = read(ANODE_ANGLE, "angle")
         findings.assume("anode angle", f"Anode angle taken as {ANODE_ANGLE}", name)
-    matched = parts.MakeUp((), f"matched to a half-value layer of {layer.material} {layer.thickness.text}" if layer else "")
+    matched = parts.MakeUp(
+        (), f"matched to a half-value layer of {layer.material} {layer.thickness.text}" if layer else ""
+    )
     return parts.XrayTube(
         name,
         entry.x_ray_tube,
@@ -57,9 +67,15 @@ def _sealed(name: str, entry: written.SealedSource, findings: Findings) -> parts
         message = "a date to decay to is given, but not the date the activity holds for"
         findings.wrong((*path, "assessed on"), message, "add 'on: 2026-03-01'")
         return None
-    if entry.on and entry.assessed_on and date.fromisoformat(entry.assessed_on) < date.fromisoformat(entry.on):
+    if (
+        entry.on
+        and entry.assessed_on
+        and date.fromisoformat(entry.assessed_on) < date.fromisoformat(entry.on)
+    ):
         message = f"'{entry.assessed_on}' is before the date of the activity, {entry.on}"
-        findings.wrong((*path, "assessed on"), message, "a source is not assessed before its activity was stated")
+        findings.wrong(
+            (*path, "assessed on"), message, "a source is not assessed before its activity was stated"
+        )
         return None
     if not entry.assessed_on:
         findings.assume("decay", "Activity taken as stated, without decay", name)
@@ -76,7 +92,9 @@ def _leakage(
     if rate is None:
         if entry.housing:
             message = "a housing is given, but no leakage that it hardens"
-            findings.wrong(("sources", name, "housing"), message, "add 'leakage: 5 mGy/h at 1 m', or take it out")
+            findings.wrong(
+                ("sources", name, "housing"), message, "add 'leakage: 5 mGy/h at 1 m', or take it out"
+            )
         return None
     if entry.housing is None:
         findings.assume("housing", f"Leakage taken as hardened by {HOUSING}", name)

@@ -43,7 +43,9 @@ def _check_pairs(document: Document, findings: Findings) -> None:
         findings.unknown(("workload", name), "beam", name, beams, on_key=True)
 
 
-def _workload(name: str, entry: written.Workload, current: float | None, findings: Findings) -> parts.Workload | None:
+def _workload(
+    name: str, entry: written.Workload, current: float | None, findings: Findings
+) -> parts.Workload | None:
     path = ("workload", name)
     week = _seconds((*path, "beam on"), entry.beam_on, current, findings)
     hour = _seconds((*path, "worst hour"), entry.worst_hour, current, findings)
