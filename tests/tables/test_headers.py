@@ -21,7 +21,9 @@ NUMBERS = {
     "k-shell.csv": "yield", "materials.csv": "density", "nuclide-lines.csv": "per_decay",
     "nuclides.csv": "half_life_s", "pair.csv": "pair", "transmission-fits.csv": "a",
 }  # fmt: skip
-"""A column of numbers in each table."""
+"""A column of numbers in each table that has one."""
+WORDS = {"containers.csv", "occupancy.csv", "receptors.csv", "rules.csv", "stock.csv"}
+"""Tables of texts, which the scenario's own readers read."""
 
 
 def lines_of(name: str) -> list[str]:
@@ -52,7 +54,8 @@ def rewritten(where: Path, name: str, lines: list[str]) -> None:
 
 
 def test_all_tables_are_known_here() -> None:
-    assert set(NUMBERS) == set(TABLES)
+    assert set(NUMBERS) | WORDS == set(TABLES)
+    assert not set(NUMBERS) & WORDS
 
 
 @pytest.mark.parametrize("name", TABLES)
@@ -104,7 +107,7 @@ def test_a_row_of_wrong_length_is_named(name: str, last: bool, copied: Path) -> 
         read(name)
 
 
-@pytest.mark.parametrize("name", TABLES)
+@pytest.mark.parametrize("name", sorted(NUMBERS))
 def test_a_number_that_is_none_is_named(name: str, copied: Path) -> None:
     column = NUMBERS[name]
     lines, first = lines_of(name), read(name).first_line

@@ -95,3 +95,8 @@ def _read_header(name: str, lines: Sequence[str]) -> tuple[dict[str, str], int]:
     if missing:
         raise DataFileError(f"data/{name}: the header lacks {', '.join(missing)}")
     return header, count
+
+
+def split_names(text: str) -> tuple[str, ...]:
+    """The names in a cell that lists them with semicolons."""
+    return tuple(name.strip() for name in text.split(";") if name.strip())
