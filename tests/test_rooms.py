@@ -17,7 +17,7 @@ ALLOWED = {
     "barriers": {"physics", "tables"},
     "scenario": {"units", "tables", "geometry"},
     "engine": {"scenario", "barriers", "physics", "geometry", "tables"},
-    "exposure": {"engine", "scenario", "physics", "tables"},
+    "exposure": {"units", "engine", "scenario", "physics", "tables"},
     "report": {"exposure", "engine", "scenario", "physics", "units"},
 }
 

@@ -46,8 +46,8 @@ def _eight_faces(around: Surroundings) -> Surroundings:
     corners = np.array([(-3, -3), (3, -3), (3, 3), (-3, 3)], dtype=float)
     screens = (Upright((-2, 2), (2, 2), 0, 2.9), Upright((-2, -2), (2, -2), 0, 2.9))
     room = Enclosure(corners, 3.0, [0.3] * 8, {}, screens)
-    sheets = [(sheet("concrete", 0.3),)] * 6 + [(sheet("lead", 1e-3),)] * 2
-    return Surroundings(around.bodies, Walls(room, sheets, {}, around.ladder), around.ladder)
+    stacks = [((sheet("concrete", 0.3),),)] * 6 + [((sheet("lead", 1e-3),),)] * 2
+    return Surroundings(around.bodies, Walls(room, stacks, around.ladder), around.ladder)
 
 
 def _rate(points: ScatterPoints, around: Surroundings) -> float:

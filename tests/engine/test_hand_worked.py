@@ -45,7 +45,7 @@ places:
 def rate(found: Contributions, place: str, path: str, quantity: int = 0) -> float:
     """Rate at a place by one path, all orders, per hour [uGy/h or uSv/h]."""
     rows = [r for r in found.rows if r.place == place and r.path == path]
-    return sum(found.drives[r.beam] * float(r.values.mean(axis=0)[quantity]) for r in rows) * 3600e6
+    return sum(r.drive * float(r.values.mean(axis=0)[quantity]) for r in rows) * 3600e6
 
 
 def assessed(text: str) -> Assessment:

@@ -2,9 +2,12 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 import numpy as np
 import pytest
 
+from scatterbay.exposure.rates import Rates
 from scatterbay.exposure.timebases import HOUR, instantaneous, together, within
 from scatterbay.scenario import loads
 from tests.engine.bays import TEXT
@@ -12,10 +15,24 @@ from tests.engine.bays import TEXT
 ONE = np.ones(4)
 
 
+NONE = Rates({}, {}, {}, {}, 0.0 * ONE)
+SOURCES = {"a": "one", "b": "one", "c": "two"}
+
+
 def test_beams_of_one_source_are_never_on_together() -> None:
     rates = {"a": 3.0 * ONE, "b": 5.0 * ONE, "c": 2.0 * ONE}
-    assert instantaneous(rates, [["a", "b"], ["c"]]) == pytest.approx(7.0 * ONE)
-    assert instantaneous(rates, [["a", "b", "c"]]) == pytest.approx(5.0 * ONE)
+    assert instantaneous(rates, [["a", "b"], ["c"]], NONE, SOURCES) == pytest.approx(7.0 * ONE)
+    assert instantaneous(rates, [["a", "b", "c"]], NONE, SOURCES) == pytest.approx(5.0 * ONE)
+
+
+def test_a_source_is_stored_or_exposed_but_another_may_be_stored_meanwhile() -> None:
+    """One stored at 4, two stored at 1; both in one set: 5 + 1 beats 4 + 1 and 2 + 4. On its way, 7 more."""
+    rates = {"a": 3.0 * ONE, "b": 5.0 * ONE, "c": 2.0 * ONE}
+    around = replace(NONE, stored={"one": 4.0 * ONE, "two": 1.0 * ONE})
+    assert instantaneous(rates, [["a", "b", "c"]], around, SOURCES) == pytest.approx(6.0 * ONE)
+    assert instantaneous(rates, [["a", "b"], ["c"]], around, SOURCES) == pytest.approx((5.0 + 2.0) * ONE)
+    moving = replace(around, minute={"one": 7.0 * ONE})
+    assert instantaneous(rates, [["a", "b", "c"]], moving, SOURCES) == pytest.approx(13.0 * ONE)
 
 
 def test_the_worst_hour_is_filled_strongest_first() -> None:

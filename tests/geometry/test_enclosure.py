@@ -5,11 +5,22 @@ from __future__ import annotations
 import numpy as np
 import pytest
 
-from scatterbay.geometry.enclosure import SOLID, Enclosure, FaceHits, Hole, Upright
+from scatterbay.geometry.cells import Cells, Rectangle, cut, middles
+from scatterbay.geometry.enclosure import OWN, Enclosure, FaceHits, Upright
 
 L_SHAPE = np.array([(0, 0), (6, 0), (6, 3), (3, 3), (3, 5), (0, 5)], dtype=float)
 ROOM = Enclosure(L_SHAPE, 3.0, [0.3] * 8, {})
 BOX = np.array([(0, 0), (6, 0), (6, 4), (0, 4)], dtype=float)
+OTHER = 2
+"""Mask of the second kind of make-up of a face."""
+
+
+def hole(low: tuple[float, float], high: tuple[float, float]) -> Cells:
+    """A face of one kind with one rectangle of another."""
+    one = Rectangle(low, high)
+    first, second = cut([one])
+    kinds = [[int(one.holds(x, y)) for y in middles(second)] for x in middles(first)]
+    return Cells(first, second, np.array(kinds))
 
 
 def test_a_line_changes_sides_as_often_as_its_ends_say() -> None:
@@ -71,26 +82,26 @@ def test_a_screen_has_ends_a_top_and_a_bottom() -> None:
 @pytest.mark.parametrize(
     ("y", "slope", "mask"),
     [
-        (2.0, 0.0, SOLID << 1),  # straight through the hole
-        (0.5, 0.0, SOLID),  # beside it
-        (0.9, 1.0, SOLID | SOLID << 1),  # enters the wall beside it, leaves it inside
-        (2.9, 1.0, SOLID | SOLID << 1),  # enters inside, leaves beside
+        (2.0, 0.0, OTHER),  # straight through the hole
+        (0.5, 0.0, OWN),  # beside it
+        (0.9, 1.0, OWN | OTHER),  # enters the wall beside it, leaves it inside
+        (2.9, 1.0, OWN | OTHER),  # enters inside, leaves beside
     ],
 )
 def test_an_opening_counts_if_the_ray_passes_it_at_either_plane(y: float, slope: float, mask: int) -> None:
-    room = Enclosure(BOX, 3.0, [0.3] * 6, {1: (Hole((1.0, 0.5), (3.0, 2.5)),)})
+    room = Enclosure(BOX, 3.0, [0.3] * 6, {1: hole((1.0, 0.5), (3.0, 2.5))})
     met = hits_of(room, [5.0, y - slope, 1.0], [8.0, y + 2.0 * slope, 1.0])
     assert met[1].mask[0] == mask
 
 
 def test_a_narrow_hole_crossed_in_mid_wall_is_not_missed() -> None:
     """A steep ray meets a 60 mm slot neither at the inner nor at the outer plane, but in between."""
-    room = Enclosure(BOX, 3.0, [0.3] * 6, {1: (Hole((1.97, 0.5), (2.03, 2.5)),)})
+    room = Enclosure(BOX, 3.0, [0.3] * 6, {1: hole((1.97, 0.5), (2.03, 2.5))})
     met = hits_of(room, [5.9, 1.75, 1.0], [6.9, 2.75, 1.0])
-    assert met[1].mask[0] == SOLID | SOLID << 1
+    assert met[1].mask[0] == OWN | OTHER
 
 
 def test_holes_in_the_ceiling() -> None:
-    room = Enclosure(BOX, 3.0, [0.3] * 6, {4: (Hole((2.0, 1.0), (3.0, 2.0)),)})
-    for x, mask in ((2.5, SOLID << 1), (4.5, SOLID)):
+    room = Enclosure(BOX, 3.0, [0.3] * 6, {4: hole((2.0, 1.0), (3.0, 2.0))})
+    for x, mask in ((2.5, OTHER), (4.5, OWN)):
         assert hits_of(room, [x, 1.5, 1.0], [x, 1.5, 5.0])[4].mask[0] == mask

@@ -9,14 +9,17 @@ from numpy.typing import NDArray
 
 from scatterbay.engine.arrive import dose_from_emitters, dose_from_points, ready
 from scatterbay.engine.first import first_collisions
+from scatterbay.engine.looking import BEAM, STORED, STUCK, TRAVEL, ScenePlace
 from scatterbay.engine.points import ScatterPoints
-from scatterbay.engine.primary import PrimaryBeam, lit_patches, primary_at, without_bodies
+from scatterbay.engine.primary import PrimaryBeam, lit_patches, primary_at, with_prefix, without_bodies
 from scatterbay.engine.scene import Scene, SceneBeam
 from scatterbay.engine.sequence import generator
+from scatterbay.engine.travel import dose_along, highest_along
 from scatterbay.engine.walk import Balance, walk_on
 from scatterbay.physics import dose
 from scatterbay.physics.compton import scattered_energy
 from scatterbay.physics.slab.grid import LOWEST_KEV
+from scatterbay.physics.spectrum import Spectrum
 
 Array = NDArray[np.float64]
 
@@ -28,9 +31,13 @@ WANTED_ERROR = 0.02
 """Batches of points are added until the standard error of the scatter of a beam is below this share of all that
 arrives from the beam, at every place, or until there are MOST_BATCHES."""
 
-PRIMARY, SCATTER, LEAKAGE = "primary", "scatter", "leakage"
+PRIMARY, SCATTER, LEAKAGE, COLLIMATOR = "primary", "scatter", "leakage", "collimator"
+MINUTE = "travel in a minute"
+"""Highest of a travelling source over a minute, kept beside the dose of a pass: for the instantaneous rate only."""
 PLANE_BOUND = "primary as a plane"
 """Kept beside the primary as its upper bound; never added to it."""
+MINUTE_SECONDS = 60.0
+"""An instantaneous rate is averaged over a minute at most."""
 HIGHER = 2
 """Order that stands for two and more."""
 
@@ -39,7 +46,9 @@ HIGHER = 2
 class Contribution:
     """One row: values (replicates, q) per unit of output [Gy or Sv per coulomb or decay].
 
+    ``beam``: name of the beam, or of the source where no beam is on. ``state``: beam, stored, travel or stuck.
     ``order``: 0 for what has not scattered in a body, 1 for single scatter, 2 for two and more.
+    ``drive``: output per second, so that drive times values is a rate; of a travelling source, the dose of one pass.
     """
 
     place: str
@@ -47,6 +56,13 @@ class Contribution:
     path: str
     order: int
     values: Array
+    drive: float
+    state: str = BEAM
+
+    @property
+    def bound(self) -> bool:
+        """An upper bound kept beside the others, never added to them."""
+        return self.path in (PLANE_BOUND, MINUTE)
 
 
 @dataclass(frozen=True)
@@ -55,7 +71,6 @@ class Contributions:
 
     rows: tuple[Contribution, ...]
     balances: dict[str, Balance]
-    drives: dict[str, float]
 
 
 def contributions(scene: Scene) -> Contributions:
@@ -63,10 +78,11 @@ def contributions(scene: Scene) -> Contributions:
     rows: list[Contribution] = []
     balances = {}
     for number, beam in enumerate(scene.beams):
-        steady = _primary_rows(scene, beam) + _leakage_rows(scene, beam)
+        steady = _primary_rows(scene, beam) + _leakage_rows(scene, beam) + _collimator_rows(scene, beam)
         scattered, balances[beam.name] = _scatter_rows(scene, number, steady)
         rows += steady + scattered
-    return Contributions(tuple(rows), balances, {beam.name: beam.drive for beam in scene.beams})
+    rows += [row for place in scene.places for row in rows_without_beam(scene, place)]
+    return Contributions(tuple(rows), balances)
 
 
 def scatter_points(scene: Scene, number: int, batch: int = 0) -> tuple[ScatterPoints, Balance]:
@@ -95,10 +111,11 @@ def _scatter_rows(
     scene: Scene, number: int, steady: list[Contribution]
 ) -> tuple[list[Contribution], Balance]:
     """Single and higher scatter at every place, from as many batches as the errors ask for."""
-    name, places = scene.beams[number].name, scene.places
+    beam, places = scene.beams[number], scene.places
+    name, drive = beam.name, beam.drive
     other = np.zeros((len(places), len(dose.QUANTITIES)))
     for row in steady:
-        if row.path != PLANE_BOUND:
+        if not row.bound:
             other[[p.name for p in places].index(row.place)] += row.values[0]
     sums, balance = np.zeros((len(places), 2 * REPLICATES, len(dose.QUANTITIES))), Balance()
     for batch in range(MOST_BATCHES):
@@ -112,8 +129,8 @@ def _scatter_rows(
     sums /= batch + 1
     rows = []
     for place, values in zip(places, sums, strict=True):
-        rows.append(Contribution(place.name, name, SCATTER, 1, values[:REPLICATES]))
-        rows.append(Contribution(place.name, name, SCATTER, HIGHER, values[REPLICATES:]))
+        rows.append(Contribution(place.name, name, SCATTER, 1, values[:REPLICATES], drive))
+        rows.append(Contribution(place.name, name, SCATTER, HIGHER, values[REPLICATES:], drive))
     return rows, balance
 
 
@@ -163,27 +180,64 @@ def _importance(scene: Scene, beam: SceneBeam, group: int) -> Array:
 
 def _primary_rows(scene: Scene, beam: SceneBeam) -> list[Contribution]:
     narrow = PrimaryBeam(beam.origin, beam.field, beam.spectrum, beam.bodies_count)
-    patches = lit_patches(narrow, scene.around)
+    around = with_prefix(narrow, beam.prefix, scene.around)
+    patches = lit_patches(narrow, around)
     rows = []
     for place in scene.places:
-        found = primary_at(narrow, patches, place.at, scene.around)
+        found = primary_at(narrow, patches, place.at, around)
         judged = found.plane if scene.primary_by_plane and found.in_field else found.patch
-        rows.append(Contribution(place.name, beam.name, PRIMARY, 0, _steady(judged)))
+        rows.append(Contribution(place.name, beam.name, PRIMARY, 0, _steady(judged), beam.drive))
         if found.in_field and beam.field.kind != "everywhere":
-            rows.append(Contribution(place.name, beam.name, PLANE_BOUND, 0, _steady(found.plane)))
+            rows.append(Contribution(place.name, beam.name, PLANE_BOUND, 0, _steady(found.plane), beam.drive))
     return rows
 
 
 def _leakage_rows(scene: Scene, beam: SceneBeam) -> list[Contribution]:
     if beam.leakage is None:
         return []
-    spectrum = beam.leakage.spectrum
-    start = np.repeat(beam.origin[None, :], spectrum.energy_kev.size, axis=0)
     rows = []
     for place in scene.places:
-        given = dose_from_emitters(start, spectrum.energy_kev, place.at, scene.around) @ spectrum.photons
-        rows.append(Contribution(place.name, beam.name, LEAKAGE, 0, _steady(given)))
+        given = _from_point(beam.origin, beam.leakage.spectrum, place, scene)
+        rows.append(Contribution(place.name, beam.name, LEAKAGE, 0, _steady(given), beam.drive))
     return rows
+
+
+def _collimator_rows(scene: Scene, beam: SceneBeam) -> list[Contribution]:
+    """What comes through a collimator, everywhere but in its port."""
+    if beam.collimator is None:
+        return []
+    rows = []
+    for place in scene.places:
+        given = _from_point(beam.origin, beam.collimator, place, scene)
+        if beam.field.holds((place.at - beam.origin)[None, :])[0]:
+            given = np.zeros_like(given)
+        rows.append(Contribution(place.name, beam.name, COLLIMATOR, 0, _steady(given), beam.drive))
+    return rows
+
+
+def rows_without_beam(scene: Scene, place: ScenePlace) -> list[Contribution]:
+    """Sealed sources stored, on their way and stuck, at one place."""
+    rows = []
+    for one in scene.stored:
+        given = _from_point(one.at, one.spectrum, place, scene)
+        rows.append(Contribution(place.name, one.source, STORED, 0, _steady(given), 1.0, STORED))
+    for way in scene.travelling:
+        whole = dose_along(way.path, way.spectrum, place.at, scene.around) / way.speed
+        minute = whole / MINUTE_SECONDS
+        if way.seconds > MINUTE_SECONDS:
+            minute = highest_along(way.path, way.spectrum, place.at, scene.around)
+        rows.append(Contribution(place.name, way.source, TRAVEL, 0, _steady(whole), way.drive, TRAVEL))
+        rows.append(Contribution(place.name, way.source, MINUTE, 0, _steady(minute), way.drive, TRAVEL))
+    for fast in scene.stuck:
+        given = _from_point(fast.at, fast.spectrum, place, scene)
+        rows.append(Contribution(place.name, fast.source, STUCK, 0, _steady(given), fast.drive, STUCK))
+    return rows
+
+
+def _from_point(origin: Array, spectrum: Spectrum, place: ScenePlace, scene: Scene) -> Array:
+    """What leaves a point evenly in all directions gives to a place, (q,)."""
+    start = np.repeat(origin[None, :], spectrum.energy_kev.size, axis=0)
+    return dose_from_emitters(start, spectrum.energy_kev, place.at, scene.around) @ spectrum.photons
 
 
 def _steady(value: Array) -> Array:

@@ -41,6 +41,17 @@ def leaking_housing(
     ------
     OutOfRangeError : the stated leakage is more than the bare source gives, or nothing stops enough of it.
     """
+    thickness = housing_for(bare, drive, stated, quantity, housing)
+    spectrum = bare.filtered(((housing, thickness),)).thinned()
+    row = dose.QUANTITIES.index(quantity)
+    return LeakingHousing(housing, thickness, spectrum.scaled(stated / (drive * spectrum.dose_at_1_m()[row])))
+
+
+def housing_for(bare: Spectrum, drive: float, stated: float, quantity: str, housing: Material) -> float:
+    """Thickness [m] of the housing behind which a source gives the stated dose rate at 1 m.
+
+    Parameters and errors as for ``leaking_housing``.
+    """
     row = dose.QUANTITIES.index(quantity)
 
     def rate(thickness: float) -> float:
@@ -59,6 +70,4 @@ def leaking_housing(
     for _ in range(60):
         middle = 0.5 * (low + high)
         low, high = (middle, high) if rate(middle) > stated else (low, middle)
-    thickness = 0.5 * (low + high)
-    spectrum = bare.filtered(((housing, thickness),)).thinned()
-    return LeakingHousing(housing, thickness, spectrum.scaled(stated / (drive * spectrum.dose_at_1_m()[row])))
+    return 0.5 * (low + high)

@@ -2,15 +2,16 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 
 import numpy as np
 from numpy.typing import NDArray
 
+from scatterbay.barriers.makeup import Sheets
 from scatterbay.engine.arrive import Surroundings, dose_from_emitters
 from scatterbay.engine.bodies import Bodies
 from scatterbay.engine.fields import BeamField
-from scatterbay.engine.walls import Group, Signature
+from scatterbay.engine.walls import Group, Signature, Walls
 from scatterbay.geometry.enclosure import Crossings
 from scatterbay.physics import dose
 from scatterbay.physics.spectrum import Spectrum
@@ -49,6 +50,7 @@ class Primary:
     patch: Array
     plane: Array
     in_field: bool
+    """In the field, or within a hand's breadth of it."""
 
 
 @dataclass(frozen=True)
@@ -149,7 +151,8 @@ def primary_at(beam: PrimaryBeam, patches: list[LitPatch], place: Array, around:
     shine = np.zeros(len(dose.QUANTITIES))
     for patch in patches:
         shine += _shine(beam, patch, place, around)
-    in_field = bool(beam.field.holds((place - beam.origin)[None, :])[0])
+    breadth = around.walls.enclosure.breadth
+    in_field = bool(beam.field.holds((place - beam.origin)[None, :], breadth)[0])
     if not in_field:
         return Primary(shine, np.zeros_like(shine), False)
     uncollided, plane = _straight(beam, place, around)
@@ -202,3 +205,21 @@ def _straight(beam: PrimaryBeam, place: Array, around: Surroundings) -> tuple[Ar
 def without_bodies(around: Surroundings) -> Surroundings:
     """The same walls with no bodies in the way."""
     return Surroundings(Bodies((), ()), around.faces, around.ladder)
+
+
+def with_prefix(beam: PrimaryBeam, prefix: Sheets, around: Surroundings) -> Surroundings:
+    """The surroundings with sheets that stand in the beam, square to it, in front of every barrier.
+
+    A barrier's sheets are crossed at the slant of its face. The prefix is taken as thin as that slant, at its
+    steepest in the field, would make up for: it never counts for more than its thickness.
+    """
+    if not prefix:
+        return around
+    direction, _ = beam.field.mesh(MESH)
+    origin = np.broadcast_to(beam.origin, direction.shape)
+    met = around.walls.enclosure.crossings(origin, origin + FAR * direction)
+    first = [(group.signature[0][0], group.rays) for group in around.walls.groups(met) if group.signature]
+    least = min((float(met.on(face, rays)[1].min()) for face, rays in first), default=1.0)
+    thinned = tuple(replace(one, thickness=least * one.thickness) for one in prefix)
+    walls = Walls(around.walls.enclosure, around.walls.stacks, around.ladder, thinned)
+    return Surroundings(around.bodies, walls, around.ladder)

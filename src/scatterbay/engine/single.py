@@ -137,7 +137,7 @@ def _patch(spectrum: Spectrum, sheets: Sheets, angle: float, patch: PatchGeometr
     thickness = sum(one.thickness for one in sheets)
     corners = np.array([(-WIDE, -WIDE), (0.0, -WIDE), (0.0, WIDE), (-WIDE, WIDE)])
     room = Enclosure(corners, 2.0 * WIDE, [thickness] * 6, {})
-    walls = Walls(room, [sheets] * 6, {}, ladder(_edges(sheets)))
+    walls = Walls(room, [(sheets,)] * 6, ladder(_edges(sheets)))
     around = Surroundings(Bodies((), ()), walls, walls.ladder)
     axis = np.array([cosine, sine, 0.0])
     origin = np.array([0.0, 0.0, WIDE]) - patch.source_distance * axis

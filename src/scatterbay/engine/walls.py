@@ -14,7 +14,8 @@ from scatterbay.barriers.makeup import Sheets
 from scatterbay.barriers.store import answer
 from scatterbay.engine.energies import Ladder, Rungs
 from scatterbay.errors import OutOfRangeError
-from scatterbay.geometry.enclosure import SOLID, Crossings, Enclosure, FaceHits
+from scatterbay.geometry.cells import MOST_KINDS
+from scatterbay.geometry.enclosure import Crossings, Enclosure, FaceHits
 from scatterbay.physics import dose
 
 Array = NDArray[np.float64]
@@ -23,11 +24,11 @@ Ints = NDArray[np.int64]
 COSINES = 48
 MOST_CROSSED = 6
 """More faces than this on one ray are refused rather than cut short."""
-SIDES = 2**16
+SIDES = 2**MOST_KINDS
 """Room for a mask in the number that stands for a crossing."""
 
 Crossing = tuple[int, bool, int]
-"""Face number, outward or not, and mask of make-ups the ray may meet."""
+"""Face number, outward or not, and mask of the kinds of make-up the ray may meet there."""
 Signature = tuple[Crossing, ...]
 """The faces a ray crosses, in order."""
 
@@ -81,25 +82,22 @@ class Way:
 class Walls:
     """Faces, their make-ups as sheets from the inside (of a screen: its left) outwards, and answers kept.
 
-    ``make_ups``: by face number, the face's own sheets. ``holes``: by face number, the sheets of each hole in
-    the order of ``enclosure.holes``. Empty sheets stand for an open face.
+    ``stacks``: by face number, the sheets of each kind of ``enclosure.cells``, its own (kind 0) first. No sheets
+    stand for an open face. ``prefix``: sheets that stand in front of everything, in the beam itself.
     """
 
     enclosure: Enclosure
-    make_ups: Sequence[Sheets]
-    holes: dict[int, tuple[Sheets, ...]]
+    stacks: Sequence[tuple[Sheets, ...]]
     ladder: Ladder
+    prefix: Sheets = ()
     _behind: dict[Signature, Behind] = field(default_factory=dict)
 
     def options(self, signature: Signature) -> list[Sheets]:
         """Every make-up that a ray of this signature may have met, as one stack of sheets each."""
-        choices = []
+        choices = [[self.prefix]]
         for face, outward, mask in signature:
-            stacks = [self.make_ups[face]] if mask & SOLID else []
-            for k, sheets in enumerate(self.holes.get(face, ())):
-                if mask & (SOLID << (k + 1)):
-                    stacks.append(sheets)
-            choices.append([stack if outward else stack[::-1] for stack in stacks])
+            kinds = dict.fromkeys(stack for k, stack in enumerate(self.stacks[face]) if mask >> k & 1)
+            choices.append([stack if outward else stack[::-1] for stack in kinds])
         return [tuple(itertools.chain(*combination)) for combination in itertools.product(*choices)]
 
     def answers(self, signature: Signature) -> list[Answer]:
@@ -129,11 +127,14 @@ class Walls:
 
     def ways(self, start: Array, end: Array) -> list[Way]:
         """Which walls lie between start (n, 3) and end (3,) or (n, 3) [m], for all rays, by signature."""
-        met = self.enclosure.crossings(start, end)
-        return [
-            Way(group.rays, self.behind(group.signature) if group.signature else None, group.cosine)
-            for group in self.groups(met)
-        ]
+        found = []
+        for group in self.groups(self.enclosure.crossings(start, end)):
+            if not group.signature and not self.prefix:
+                found.append(Way(group.rays, None, None))
+                continue
+            cosine = np.ones(group.rays.size) if group.cosine is None else group.cosine
+            found.append(Way(group.rays, self.behind(group.signature), cosine))
+        return found
 
     def groups(self, met: Crossings) -> list[Group]:
         """The rays of each signature that occurs."""

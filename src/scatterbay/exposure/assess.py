@@ -2,13 +2,17 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Callable, Sequence
 
 import numpy as np
 from numpy.typing import NDArray
 
-from scatterbay.engine.contributions import PLANE_BOUND, SCATTER, Contribution, Contributions
-from scatterbay.engine.scene import Scene, ScenePlace
+from scatterbay.engine.contributions import PRIMARY, SCATTER, Contribution, Contributions
+from scatterbay.engine.looking import STUCK, ScenePlace
+from scatterbay.engine.scene import Scene
+from scatterbay.exposure.capacity import Judged, capacities
+from scatterbay.exposure.cycles import cycle_doses, stuck_doses, survey_rate
+from scatterbay.exposure.rates import Rates, rates_of
 from scatterbay.exposure.results import (
     ABOVE,
     BELOW,
@@ -22,38 +26,85 @@ from scatterbay.exposure.results import (
     PathShare,
     PlaceResult,
 )
-from scatterbay.exposure.timebases import DAY, HOUR, instantaneous, together, weekly, within
+from scatterbay.exposure.timebases import Timing, time_bases, timing_of
 from scatterbay.physics import dose
 from scatterbay.scenario.parts import Place, Scenario
 from scatterbay.tables.allowances import allowances
 
 Array = NDArray[np.float64]
-Rates = dict[str, dict[str, Array]]
-"""By path, then beam: (replicates, q) while the beam is on."""
 
 NOT_ENCLOSED = (
     "not fully enclosed from the sources by barriers: scatter from walls, floor and ceiling is not computed yet, "
     "so no figure here can be called below a goal"
 )
+_WORST_FIRST = ("open", "lining", "wall")
 
 
 def assess(scenario: Scenario, scene: Scene, found: Contributions) -> Assessment:
     """Figures, goals and verdicts for every place."""
-    places = tuple(
-        _place(scenario, place, spot, [row for row in found.rows if row.place == place.name], found)
-        for place, spot in zip(scenario.places, scene.places, strict=True)
-    )
+    timing = timing_of(scenario, scene.workloads, {name: one.annual for name, one in scene.outputs.items()})
+    places, judged = [], []
+    for place, spot in zip(scenario.places, scene.places, strict=True):
+        rows = [row for row in found.rows if row.place == place.name]
+        factors = _Factors(scenario, scene, spot)
+        result = _place(scenario, scene, place, spot, rows, timing, factors)
+        places.append(result)
+        if spot.enclosed:
+            high = rates_of(rows, factors.at(1), _shape(rows))
+            judged.append(Judged(place.name, place.occupancy, high, result.goals))
     return Assessment(
-        scenario.title, scenario.drawing, scenario.path, scenario.sha256, scenario.options.seed, places,
-        (*scenario.assumptions, *scene.assumptions),
+        scenario.title, scenario.drawing, scenario.path, scenario.sha256, scenario.options.seed, tuple(places),
+        (*scenario.assumptions, *scene.assumptions), capacities(timing, judged),
+        tuple(p.name for p in places if p.reasons and p.goals),
+        tuple(dict.fromkeys(goal.source for group in scenario.people for goal in group.goals if goal.source)),
     )  # fmt: skip
 
 
+class _Factors:
+    """What every row of a place is multiplied by at the ends of its band: model allowance and output's tolerance."""
+
+    def __init__(self, scenario: Scenario, scene: Scene, spot: ScenePlace) -> None:
+        self._source_of = {beam.name: beam.source for beam in scenario.beams}
+        self._outputs, self._behind = scene.outputs, spot.behind
+
+    def behind(self, row: Contribution) -> str:
+        """What lies between the place and what a row is from."""
+        return self._behind[row.beam, row.state]
+
+    def at(self, end: int) -> Callable[[Contribution], float]:
+        """The factor at the low end (-1), the middle (0) or the high end (1)."""
+
+        def factor(row: Contribution) -> float:
+            if end == 0 or (row.bound and row.path.startswith(PRIMARY)):
+                return 1.0
+            allowed = allowances()[PRIMARY if row.state == STUCK else _path(row), self.behind(row)]
+            source = self._source_of.get(row.beam, row.beam)
+            spread = self._outputs[source].tolerance
+            return (1.0 - allowed.low) * (1.0 - spread) if end < 0 else (1.0 + allowed.high) * (1.0 + spread)
+
+        return factor
+
+
+def _path(row: Contribution) -> str:
+    """The path whose allowance a row takes."""
+    return row.state if row.bound else row.path
+
+
+def _shape(rows: Sequence[Contribution]) -> tuple[int, ...]:
+    return next((row.values.shape for row in rows), (1, len(dose.QUANTITIES)))
+
+
 def _place(
-    scenario: Scenario, place: Place, spot: ScenePlace, rows: list[Contribution], found: Contributions
+    scenario: Scenario,
+    scene: Scene,
+    place: Place,
+    spot: ScenePlace,
+    rows: Sequence[Contribution],
+    timing: Timing,
+    factors: _Factors,
 ) -> PlaceResult:
-    rates = _rates(scenario, rows, found.drives)
-    figures = _figures(scenario, place, spot.behind, rates)
+    middle, low, high = (rates_of(rows, factors.at(end), _shape(rows)) for end in (0, -1, 1))
+    figures = _figures(timing, place, middle, low, high)
     people = next(group for group in scenario.people if group.name == place.people)
     goals = tuple(
         GoalResult(goal.text, figure := figures[goal.time_base, goal.quantity], goal.value,
@@ -63,7 +114,7 @@ def _place(
     order = (ABOVE, CLOSE, BELOW)
     verdict = min((g.verdict for g in goals), key=order.index, default=NO_GOAL)
     quantities = {goal.quantity for goal in people.goals}
-    shares = _shares(rows, found.drives)
+    shares = _shares(rows, factors)
     scatter = {
         q: (
             sum(s.rate[q] for s in shares if s.path == SCATTER and s.order == 1),
@@ -76,7 +127,7 @@ def _place(
         at=place.at,
         how=place.how,
         people=place.people,
-        area=people.area,
+        area=place.area or people.area,
         occupancy=place.occupancy,
         quantity=dose.AIR_KERMA if quantities == {dose.AIR_KERMA} else dose.AMBIENT,
         figures=figures,
@@ -86,66 +137,30 @@ def _place(
         paths=shares,
         single_scatter={q: pair[0] for q, pair in scatter.items()},
         all_scatter={q: pair[1] for q, pair in scatter.items()},
-        factors=_factors(scenario),
-        behind=spot.behind,
+        factors=_multiplied(timing),
+        behind=min(spot.behind.values(), key=_WORST_FIRST.index),
+        cycles=cycle_doses(timing, middle),
+        stuck=stuck_doses(scene, rows),
+        survey_rate=survey_rate(scene, timing, middle),
     )
 
 
-def _rates(scenario: Scenario, rows: list[Contribution], drives: Mapping[str, float]) -> Rates:
-    """Rates by path and beam; zero where a beam has no such path."""
-    names = [beam.name for beam in scenario.beams]
-    shape = next((row.values.shape for row in rows), (1, len(dose.QUANTITIES)))
-    rates: Rates = {
-        path: {name: np.zeros(shape) for name in names} for path in ("primary", "scatter", "leakage")
-    }
-    for row in rows:
-        if row.path != PLANE_BOUND:
-            rates[row.path][row.beam] = rates[row.path][row.beam] + drives[row.beam] * row.values
-    return rates
-
-
-def _figures(scenario: Scenario, place: Place, behind: str, rates: Rates) -> dict[tuple[str, str], Figure]:
-    """Each figure three times: as it is, and at both ends of the model allowance."""
-    variants = []
-    for end in (0, -1, 1):
-        scaled: Rates = {}
-        for path, beams in rates.items():
-            allowed = allowances()[path, behind]
-            factor = {0: 1.0, -1: 1.0 - allowed.low, 1: 1.0 + allowed.high}[end]
-            scaled[path] = {name: factor * value for name, value in beams.items()}
-        variants.append(_time_bases(scenario, place.occupancy, scaled))
+def _figures(
+    timing: Timing, place: Place, middle: Rates, low: Rates, high: Rates
+) -> dict[tuple[str, str], Figure]:
+    """Each figure as it is, and at both ends of its band."""
+    variants = [time_bases(timing, place.occupancy, rates) for rates in (middle, low, high)]
     figures = {}
     for base in TIME_BASES:
         for k, quantity in enumerate(dose.QUANTITIES):
-            middle, low, high = (v[base][:, k] for v in variants)
-            count = len(middle)
-            error = float(middle.std(ddof=1) / np.sqrt(count)) if count > 1 else 0.0
-            mean = float(middle.mean())
+            values, lower, upper = (v[base][:, k] for v in variants)
+            count = len(values)
+            error = float(values.std(ddof=1) / np.sqrt(count)) if count > 1 else 0.0
             figures[base, quantity] = Figure(
-                base, quantity, mean, error,
-                max(0.0, float(low.mean()) - 2.0 * error), float(high.mean()) + 2.0 * error,
+                base, quantity, float(values.mean()), error,
+                max(0.0, float(lower.mean()) - 2.0 * error), float(upper.mean()) + 2.0 * error,
             )  # fmt: skip
     return figures
-
-
-def _time_bases(scenario: Scenario, occupancy: float, rates: Rates) -> dict[str, Array]:
-    """Dose or rate over each time base, (replicates, q)."""
-    loads = {load.beam: load for load in scenario.workloads}
-    names = [beam.name for beam in scenario.beams]
-    primary = rates["primary"]
-    other = {name: rates["scatter"][name] + rates["leakage"][name] for name in names}
-    whole = {name: primary[name] + other[name] for name in names}
-    sets = together(scenario)
-    hours = {name: loads[name].seconds_in_worst_hour for name in names}
-    days = {name: loads[name].seconds_in_worst_day for name in names}
-    week, year = weekly(primary, other, scenario.beams, loads)
-    return {
-        "rate": instantaneous(whole, sets),
-        "hour": within(whole, hours, HOUR, sets),
-        "day": within(whole, days, DAY, sets) / DAY,
-        "week": occupancy * week,
-        "year": occupancy * year,
-    }
 
 
 def _verdict(figure: Figure, goal: float, enclosed: bool) -> str:
@@ -156,12 +171,11 @@ def _verdict(figure: Figure, goal: float, enclosed: bool) -> str:
     return CLOSE
 
 
-def _shares(rows: list[Contribution], drives: Mapping[str, float]) -> tuple[PathShare, ...]:
+def _shares(rows: Sequence[Contribution], factors: _Factors) -> tuple[PathShare, ...]:
     shares = []
     for row in rows:
-        rate = drives[row.beam] * row.values
+        rate = row.drive * row.values
         error = rate.std(axis=0, ddof=1) / np.sqrt(len(rate))
-        bound = row.path == PLANE_BOUND
         shares.append(
             PathShare(
                 row.beam,
@@ -169,15 +183,17 @@ def _shares(rows: list[Contribution], drives: Mapping[str, float]) -> tuple[Path
                 row.order,
                 dict(zip(dose.QUANTITIES, map(float, rate.mean(axis=0)), strict=True)),
                 dict(zip(dose.QUANTITIES, map(float, error), strict=True)),
-                bound,
+                row.bound,
+                row.state,
+                factors.behind(row),
             )
         )
     main = dose.AMBIENT
     return tuple(sorted(shares, key=lambda s: (s.bound, -s.rate[main])))
 
 
-def _factors(scenario: Scenario) -> tuple[Factors, ...]:
-    uses = {beam.name: beam.use_factor for beam in scenario.beams}
+def _multiplied(timing: Timing) -> tuple[Factors, ...]:
+    uses = {beam.name: beam.use_factor for beam in timing.beams}
     return tuple(
         Factors(
             load.beam,
@@ -188,6 +204,8 @@ def _factors(scenario: Scenario) -> tuple[Factors, ...]:
             },
             uses[load.beam],
             load.weeks_per_year,
+            load.cycles,
+            timing.annual.get(timing.source_of[load.beam], 1.0),
         )
-        for load in scenario.workloads
+        for load in timing.loads.values()
     )

@@ -29,7 +29,11 @@ class Figure:
 
 @dataclass(frozen=True)
 class PathShare:
-    """One path's instantaneous rate while its beam is on [Gy/s, Sv/s]; ``bound`` marks a plane bound, not added."""
+    """One path's instantaneous rate while its beam is on [Gy/s, Sv/s]; ``bound`` marks a plane bound, not added.
+
+    ``state``: beam; stored (``beam`` then names the source); travel and stuck, whose figures are the dose of one pass
+    and of the whole time stuck [Gy, Sv], not rates. ``behind``: what lies in between.
+    """
 
     beam: str
     path: str
@@ -37,6 +41,8 @@ class PathShare:
     rate: dict[str, float]
     standard_error: dict[str, float]
     bound: bool = False
+    state: str = "beam"
+    behind: str = "wall"
 
 
 @dataclass(frozen=True)
@@ -56,12 +62,51 @@ class GoalResult:
 
 @dataclass(frozen=True)
 class Factors:
-    """The multiplications behind a place's figures, one entry per beam: seconds on, use factor, weeks."""
+    """The multiplications behind a place's figures, one entry per beam: seconds on, use factor, weeks.
+
+    ``cycles``: exposure cycles per week, in the worst hour and in the worst 8 h; None where they are not stated.
+    ``annual``: mean output over the year over that of the design.
+    """
 
     beam: str
     seconds: dict[str, float]
     use_factor: float
     weeks: float
+    cycles: tuple[float, float, float] | None = None
+    annual: float = 1.0
+
+
+@dataclass(frozen=True)
+class CycleDose:
+    """Dose of one exposure cycle at a place, by quantity [Gy, Sv]: the exposure, and the passes out and back."""
+
+    beam: str
+    seconds: float
+    exposed: dict[str, float]
+    passes: dict[str, float]
+
+
+@dataclass(frozen=True)
+class StuckDose:
+    """Dose at a place if a source is stuck for a time [s], by quantity [Gy, Sv]: in no other figure."""
+
+    source: str
+    seconds: float
+    dose: dict[str, float]
+
+
+@dataclass(frozen=True)
+class Capacity:
+    """The greatest weekly workload that keeps every weekly and annual goal, by the upper end of each figure's band.
+
+    ``beam``: the beam, the others staying as stated; empty for all beams together. ``factor``: over the stated
+    workload; infinite where nothing limits it. ``place`` and ``goal``: what limits it; empty where nothing does.
+    """
+
+    beam: str
+    factor: float
+    place: str
+    goal: str
 
 
 @dataclass(frozen=True)
@@ -88,6 +133,11 @@ class PlaceResult:
     all_scatter: dict[str, float]
     factors: tuple[Factors, ...]
     behind: str
+    """The worst of what lies between the place and anything that radiates: open, lining, wall."""
+    cycles: tuple[CycleDose, ...] = ()
+    stuck: tuple[StuckDose, ...] = ()
+    survey_rate: dict[str, float] | None = None
+    """Highest rate on the day of a planned survey; None where no day is stated."""
 
     def figure(self, time_base: str) -> Figure:
         """The figure of a time base in the place's own quantity."""
@@ -105,6 +155,11 @@ class Assessment:
     seed: int
     places: tuple[PlaceResult, ...]
     assumptions: tuple[Assumption, ...]
+    capacities: tuple[Capacity, ...] = ()
+    left_out_of_capacity: tuple[str, ...] = ()
+    """Places that could not be judged below a goal, and so do not count in the capacities."""
+    rule_sets: tuple[str, ...] = ()
+    """Rule sets that goals were taken from."""
 
     @property
     def worst(self) -> str:

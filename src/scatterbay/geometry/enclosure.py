@@ -14,22 +14,15 @@ from functools import cached_property
 import numpy as np
 from numpy.typing import NDArray
 
+from scatterbay.geometry.cells import Cells
 from scatterbay.geometry.outline import contains
 
 Array = NDArray[np.float64]
 Flags = NDArray[np.bool_]
 Ints = NDArray[np.int64]
 
-SOLID = 1
-"""Bit of a mask that stands for the face's own make-up; bit k + 1 stands for its k-th hole."""
-
-
-@dataclass(frozen=True)
-class Hole:
-    """A rectangle in a face, in the face's own two coordinates [m]."""
-
-    low: tuple[float, float]
-    high: tuple[float, float]
+OWN = 1
+"""Mask of a ray that meets only the make-up that most of a face has, its kind 0: see ``Cells``."""
 
 
 @dataclass(frozen=True)
@@ -53,7 +46,7 @@ class FaceHits:
     at : where on the ray, in units of it (m,).
     cosine : of the angle to the face's normal (m,).
     outward : True where the ray runs along the normal: out of the room, from a screen's left to its right (m,).
-    mask : which make-ups the ray may meet there (m,): see ``SOLID``.
+    mask : which kinds of make-up the ray may meet there (m,): see ``Cells``.
     """
 
     face: int
@@ -112,17 +105,20 @@ class _Rays:
 
 @dataclass(frozen=True)
 class Enclosure:
-    """A prism with holes in its faces, and screens.
+    """A prism, and screens.
 
     Faces are numbered: the sides in the order of the corners, the ceiling, the floor, the screens.
-    ``thickness``: of each face, from the inner plane outwards [m]. ``holes``: by face number.
+    ``thickness``: of each face, from the inner plane outwards [m]. ``cells``: by number, of the faces that are not
+    the same all over; in (distance from the first corner, height) of sides and screens, (x, y) of ceiling and floor.
+    ``breadth``: how far around itself a ray looks for another kind of make-up [m].
     """
 
     corners: Array
     height: float
     thickness: Sequence[float]
-    holes: dict[int, tuple[Hole, ...]]
+    cells: dict[int, Cells]
     screens: tuple[Upright, ...] = ()
+    breadth: float = 0.0
 
     @property
     def ceiling(self) -> int:
@@ -206,13 +202,13 @@ class Enclosure:
             if not found.size:
                 continue
             place = at[found]
-            mask = np.full(found.size, SOLID, dtype=np.int64)
-            if self.holes.get(k):
+            mask = np.full(found.size, OWN, dtype=np.int64)
+            if k in self.cells:
                 x, y = rays.x[found] + place * rays.dx[found], rays.y[found] + place * rays.dy[found]
                 first = (x - corner[k, 0]) * along[k, 0] + (y - corner[k, 1]) * along[k, 1]
                 level = rays.z[found] + place * rays.dz[found]
                 slope = rays.dx[found] * along[k, 0] + rays.dy[found] * along[k, 1]
-                mask = self._through_holes(k, (first, level), (slope, rays.dz[found]), rate[found])
+                mask = self._masks(k, (first, level), (slope, rays.dz[found]), rate[found])
             cosine = np.abs(rate[found]) / rays.length[found]
             hits.append(FaceHits(k, found, place, cosine, rate[found] > 0.0, mask))
         return everywhere
@@ -233,25 +229,19 @@ class Enclosure:
         if not found.size:
             return
         rate = rays.dz[found] * (1.0 if face == self.ceiling else -1.0)
-        mask = np.full(found.size, SOLID, dtype=np.int64)
-        if self.holes.get(face):
+        mask = np.full(found.size, OWN, dtype=np.int64)
+        if face in self.cells:
             position = rays.x[found] + place * rays.dx[found], rays.y[found] + place * rays.dy[found]
-            mask = self._through_holes(face, position, (rays.dx[found], rays.dy[found]), rate)
+            mask = self._masks(face, position, (rays.dx[found], rays.dy[found]), rate)
         cosine = np.abs(rate) / rays.length[found]
         hits.append(FaceHits(face, found, place, cosine, rate > 0.0, mask))
 
-    def _through_holes(
+    def _masks(
         self, face: int, position: tuple[Array, Array], slopes: tuple[Array, Array], rate: Array
     ) -> Ints:
-        """Masks of rays by the holes they pass, wholly or partly, between the inner and the outer plane."""
+        """Which make-ups rays may meet, from where they meet the inner plane and how they run on."""
         depth = self.thickness[face] / rate
-        shift = slopes[0] * depth, slopes[1] * depth
-        mask = np.full(rate.shape, SOLID, dtype=np.int64)
-        for k, hole in enumerate(self.holes[face]):
-            touched, within = _passes(position, shift, hole)
-            bit = SOLID << (k + 1)
-            mask = np.where(within, bit, np.where(touched, mask | bit, mask))
-        return mask
+        return self.cells[face].masks(position, (slopes[0] * depth, slopes[1] * depth), self.breadth)
 
     def _cross_screen(self, face: int, screen: Upright, rays: _Rays, hits: list[FaceHits]) -> None:
         """Add a screen."""
@@ -270,20 +260,11 @@ class Enclosure:
         found, place = found[kept], place[kept]
         if found.size:
             cosine = np.abs(rate[found]) / rays.length[found]
-            mask = np.full(found.size, SOLID, dtype=np.int64)
+            mask = np.full(found.size, OWN, dtype=np.int64)
+            if face in self.cells:
+                along = (end - start) / np.linalg.norm(end - start)
+                slope = rays.dx[found] * along[0] + rays.dy[found] * along[1]
+                first = (rays.x[found] - start[0]) * along[0] + (rays.y[found] - start[1]) * along[1]
+                slopes = slope, rays.dz[found]
+                mask = self._masks(face, (first + place * slope, level[kept]), slopes, rate[found])
             hits.append(FaceHits(face, found, place, cosine, rate[found] > 0.0, mask))
-
-
-def _passes(position: tuple[Array, Array], shift: tuple[Array, Array], hole: Hole) -> tuple[Flags, Flags]:
-    """Which rays pass a hole anywhere between the planes, and which stay within it from plane to plane."""
-    enter, leave = np.zeros(position[0].shape), np.ones(position[0].shape)
-    within = np.ones(position[0].shape, dtype=bool)
-    for axis in (0, 1):
-        low, high = hole.low[axis], hole.high[axis]
-        first, last = position[axis], position[axis] + shift[axis]
-        within &= (first >= low) & (first < high) & (last >= low) & (last < high)
-        step = np.where(shift[axis] == 0.0, 1e-300, shift[axis])
-        one, two = (low - first) / step, (high - first) / step
-        enter = np.maximum(enter, np.minimum(one, two))
-        leave = np.minimum(leave, np.maximum(one, two))
-    return enter < leave, within

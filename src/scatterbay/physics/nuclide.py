@@ -59,6 +59,21 @@ def decayed(activity: float, half_life: float, elapsed: float) -> float:
     return activity * math.exp(-math.log(2.0) * elapsed / half_life)
 
 
+def mean_over_cycle(half_life: float, cycle: float) -> float:
+    """Mean activity over a time between exchanges, over the activity at its start: (1 - exp(-x)) / x.
+
+    x = ln 2 cycle / half-life; both in the same unit.
+
+    Raises
+    ------
+    OutOfRangeError : the cycle is not above zero.
+    """
+    if cycle <= 0.0:
+        raise OutOfRangeError("the time between exchanges must be above zero")
+    x = math.log(2.0) * cycle / half_life
+    return -math.expm1(-x) / x
+
+
 def air_kerma_rate_constant(nuclide: Nuclide, lowest_kev: float = 20.0) -> float:
     """Air kerma rate constant [Gy m2 / (Bq s)] of the lines from ``lowest_kev`` up."""
     spectrum = nuclide_spectrum(nuclide)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass, replace
 
 import numpy as np
@@ -94,3 +95,12 @@ class Spectrum:
         weight = self.photons * dose.air_kerma_per_fluence(self.energy_kev)
         kept = weight > share * weight.sum()
         return replace(self, energy_kev=self.energy_kev[kept], photons=self.photons[kept])
+
+
+def mixed(spectra: Sequence[Spectrum], shares: Sequence[float]) -> Spectrum:
+    """Several spectra at once, each counted by its share."""
+    energy = np.unique(np.concatenate([one.energy_kev for one in spectra]))
+    photons = np.zeros(energy.size)
+    for one, share in zip(spectra, shares, strict=True):
+        photons[np.searchsorted(energy, one.energy_kev)] += share * one.photons
+    return Spectrum(energy, photons, spectra[0].per)

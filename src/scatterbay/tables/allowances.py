@@ -18,7 +18,7 @@ class Allowance(NamedTuple):
 
 @cache
 def allowances() -> dict[tuple[str, str], Allowance]:
-    """Allowance by path (primary, scatter, leakage, collimator, stored, travel) and by what is behind (open, wall, lining)."""
+    """Allowance by path (primary, scatter, leakage, collimator, stored, travel) and by what is behind."""
     table = read_table("allowances.csv", ("path", "behind", "low", "high", "reason"))
     keys = zip(table.texts("path"), table.texts("behind"), strict=True)
     values = zip(table.numbers("low"), table.numbers("high"), table.texts("reason"), strict=True)

@@ -27,7 +27,8 @@ class XrayTube:
 
     ``voltages``: where the tube's charge is spread over several voltages, each with its share (they add up to 1);
     ``voltage`` is then the highest. ``set_name``: the tube that this is a setting of; beams of one set are never on
-    together. ``per_exposure``: charge of one exposure [C] where the current is an average over a minute.
+    together. ``output_at``, ``layer_at``: voltages at which the output and the half-value layer were measured; None:
+    its own. ``per_exposure``: charge of one exposure [C] where the current is an average over a minute.
     """
 
     name: str
@@ -41,6 +42,8 @@ class XrayTube:
     voltages: tuple[tuple[Quantity, float], ...] = ()
     set_name: str = ""
     per_exposure: float | None = None
+    output_at: Quantity | None = None
+    layer_at: Quantity | None = None
 
 
 @dataclass(frozen=True)
