@@ -26,7 +26,7 @@ from scatterbay.exposure.results import (
     PathShare,
     PlaceResult,
 )
-from scatterbay.exposure.timebases import Timing, time_bases, timing_of
+from scatterbay.exposure.timebases import Timing, time_bases, timing_of, weekly_amount
 from scatterbay.physics import dose
 from scatterbay.scenario.parts import Place, Scenario
 from scatterbay.tables.allowances import allowances
@@ -54,7 +54,7 @@ def assess(scenario: Scenario, scene: Scene, found: Contributions) -> Assessment
             judged.append(Judged(place.name, place.occupancy, high, result.goals))
     return Assessment(
         scenario.title, scenario.drawing, scenario.path, scenario.sha256, scenario.options.seed, tuple(places),
-        (*scenario.assumptions, *scene.assumptions), capacities(timing, judged),
+        (*scenario.assumptions, *scene.assumptions), capacities(timing, judged, scenario.sources),
         tuple(p.name for p in places if p.reasons and p.goals),
         tuple(dict.fromkeys(goal.source for group in scenario.people for goal in group.goals if goal.source)),
     )  # fmt: skip
@@ -114,7 +114,7 @@ def _place(
     order = (ABOVE, CLOSE, BELOW)
     verdict = min((g.verdict for g in goals), key=order.index, default=NO_GOAL)
     quantities = {goal.quantity for goal in people.goals}
-    shares = _shares(rows, factors)
+    shares = _shares(rows, factors, timing)
     scatter = {
         q: (
             sum(s.rate[q] for s in shares if s.path == SCATTER and s.order == 1),
@@ -171,9 +171,10 @@ def _verdict(figure: Figure, goal: float, enclosed: bool) -> str:
     return CLOSE
 
 
-def _shares(rows: Sequence[Contribution], factors: _Factors) -> tuple[PathShare, ...]:
+def _shares(rows: Sequence[Contribution], factors: _Factors, timing: Timing) -> tuple[PathShare, ...]:
     shares = []
     for row in rows:
+        seconds = weekly_amount(timing, row)
         rate = row.drive * row.values
         error = rate.std(axis=0, ddof=1) / np.sqrt(len(rate))
         shares.append(
@@ -181,15 +182,21 @@ def _shares(rows: Sequence[Contribution], factors: _Factors) -> tuple[PathShare,
                 row.beam,
                 row.path,
                 row.order,
-                dict(zip(dose.QUANTITIES, map(float, rate.mean(axis=0)), strict=True)),
+                _by_quantity(rate),
                 dict(zip(dose.QUANTITIES, map(float, error), strict=True)),
                 row.bound,
                 row.state,
                 factors.behind(row),
+                {} if seconds is None else _by_quantity(seconds * rate),
             )
         )
     main = dose.AMBIENT
-    return tuple(sorted(shares, key=lambda s: (s.bound, -s.rate[main])))
+    return tuple(sorted(shares, key=lambda s: (s.bound, -s.week.get(main, 0.0), -s.rate[main])))
+
+
+def _by_quantity(values: Array) -> dict[str, float]:
+    """Means over the replicates (replicates, q)."""
+    return dict(zip(dose.QUANTITIES, map(float, values.mean(axis=0)), strict=True))
 
 
 def _multiplied(timing: Timing) -> tuple[Factors, ...]:

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 from numpy.typing import NDArray
@@ -13,6 +13,7 @@ from scatterbay.exposure.rates import Rates
 from scatterbay.exposure.results import Capacity, GoalResult
 from scatterbay.exposure.timebases import Timing, by_beam, stored_doses
 from scatterbay.physics import dose
+from scatterbay.scenario.parts import Source, Workload, XrayTube
 
 Array = NDArray[np.float64]
 
@@ -38,7 +39,7 @@ class _Load:
     always: float
 
 
-def capacities(timing: Timing, judged: Sequence[Judged]) -> tuple[Capacity, ...]:
+def capacities(timing: Timing, judged: Sequence[Judged], sources: Sequence[Source]) -> tuple[Capacity, ...]:
     """For all beams together, then for each beam with the others as stated.
 
     The figures are the upper ends of the bands, so that a workload up to the capacity would still be judged below.
@@ -47,12 +48,29 @@ def capacities(timing: Timing, judged: Sequence[Judged]) -> tuple[Capacity, ...]
     loads = [load for one in judged for load in _loads(timing, one)]
     names = [beam.name for beam in timing.beams]
     found = [_limit("", [(load, load.always, sum(load.beams.values())) for load in loads])]
-    for name in names if len(names) > 1 else []:
-        found.append(
-            _limit(name, [(load, load.always + sum(load.beams.values()) - load.beams[name], load.beams[name])
-                          for load in loads])
-        )  # fmt: skip
+    by_name = {source.name: source for source in sources}
+    for name in names:
+        cases = [
+            (load, load.always + sum(load.beams.values()) - load.beams[name], load.beams[name])
+            for load in loads
+        ]
+        stated, unit = _stated(timing.loads[name], by_name[timing.source_of[name]])
+        found.append(replace(_limit(name, cases), stated=stated, unit=unit))
     return tuple(found)
+
+
+def _stated(load: Workload, source: Source) -> tuple[float, str]:
+    """A weekly workload in the terms it is spoken of."""
+    if load.area_product is not None:
+        return 1e4 * load.area_product[0], "Gy cm2/week"
+    if load.cycles is not None:
+        return load.cycles[0], "cycles/week"
+    if not isinstance(source, XrayTube):
+        return load.seconds_per_week / 3600.0, "h/week"
+    charge = load.seconds_per_week * source.current.value
+    if source.per_exposure is not None:
+        return charge / source.per_exposure, "exposures/week"
+    return charge * 1e3 / 60.0, "mA min/week"
 
 
 def _limit(beam: str, cases: list[tuple[_Load, float, float]]) -> Capacity:

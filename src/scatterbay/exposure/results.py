@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
 from scatterbay.scenario.parts import Assumption
 
@@ -43,6 +43,8 @@ class PathShare:
     bound: bool = False
     state: str = "beam"
     behind: str = "wall"
+    week: dict[str, float] = field(default_factory=dict)
+    """Dose of a week at full occupancy, by quantity [Gy, Sv]; empty for bounds and for what is stuck."""
 
 
 @dataclass(frozen=True)
@@ -107,6 +109,9 @@ class Capacity:
     factor: float
     place: str
     goal: str
+    stated: float = 1.0
+    """The stated workload, in ``unit``."""
+    unit: str = ""
 
 
 @dataclass(frozen=True)

@@ -15,7 +15,8 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
-from scatterbay.engine.contributions import PRIMARY
+from scatterbay.engine.contributions import PRIMARY, Contribution
+from scatterbay.engine.looking import STORED, STUCK, TRAVEL
 from scatterbay.exposure.rates import Rates
 from scatterbay.scenario.parts import Beam, Scenario, SealedSource, Workload, XrayTube
 from scatterbay.units.kinds import YEAR_WEEKS
@@ -140,6 +141,19 @@ def by_beam(timing: Timing, rates: Rates) -> dict[str, tuple[Array, Array]]:
             dose = dose + PASSES * load.cycles[0] * rates.passes[source]
         found[beam.name] = dose, dose * load.weeks_per_year * timing.annual.get(source, 1.0)
     return found
+
+
+def weekly_amount(timing: Timing, row: Contribution) -> float | None:
+    """What a row's drive times values is multiplied by in a week: seconds, or passes; None where it has no part."""
+    if row.bound or row.state == STUCK:
+        return None
+    if row.state == STORED:
+        return timing.stored[row.beam]
+    if row.state == TRAVEL:
+        loads = [load for name, load in timing.loads.items() if timing.source_of[name] == row.beam]
+        return PASSES * sum(load.cycles[0] for load in loads if load.cycles is not None)
+    use = next(beam.use_factor for beam in timing.beams if beam.name == row.beam)
+    return timing.loads[row.beam].seconds_per_week * (use if row.path == PRIMARY else 1.0)
 
 
 def stored_doses(timing: Timing, rates: Rates) -> tuple[Array, Array]:

@@ -11,8 +11,10 @@ CAUTIONS = (
     "Verdicts say below, above or too close to call: for this estimate and these inputs, nothing more.",
 )
 
+LOCAL_RULES = "Rule sets shipped here are recalled and general: local rules prevail, and may be stricter."
+
 NOT_COVERED = (
-    "Not covered yet: scatter from walls, floor and ceiling (mazes, open doors, sky above a thin roof), joints, ducts "
-    "and edges of linings, stored and travelling sources, faults of interlocks or equipment.",
+    "Not covered yet: scatter from walls, floor and ceiling (mazes, open doors, sky above a thin roof), joints and "
+    "ducts that are not entered, scatter of a source on its way, faults of interlocks or equipment.",
 )
 """What the estimate leaves out, in a sentence."""

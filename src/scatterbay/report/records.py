@@ -2,10 +2,20 @@
 
 from __future__ import annotations
 
+import math
 from typing import Any
 
 from scatterbay import __version__
-from scatterbay.exposure.results import TIME_BASES, Assessment, Figure, GoalResult, PathShare, PlaceResult
+from scatterbay.engine.looking import TRAVEL
+from scatterbay.exposure.results import (
+    TIME_BASES,
+    Assessment,
+    Capacity,
+    Figure,
+    GoalResult,
+    PathShare,
+    PlaceResult,
+)
 from scatterbay.report.cautions import CAUTIONS, NOT_COVERED
 from scatterbay.report.words import in_unit, unit
 
@@ -25,6 +35,9 @@ def assessment_record(assessment: Assessment) -> dict[str, Any]:
         "scenario": {"path": assessment.path, "sha256": assessment.sha256, "seed": assessment.seed},
         "verdict": assessment.worst,
         "places": [_place(place) for place in assessment.places],
+        "capacities": [_capacity(one) for one in assessment.capacities],
+        "left_out_of_capacity": list(assessment.left_out_of_capacity),
+        "rule_sets": list(assessment.rule_sets),
         "assumptions": [{"topic": a.topic, "text": a.text} for a in assessment.assumptions],
     }
 
@@ -60,12 +73,54 @@ def _goal(result: GoalResult) -> dict[str, Any]:
     }
 
 
+def _dose(value: float, quantity: str) -> dict[str, Any]:
+    return {"value": in_unit(value, "hour"), "unit": unit("hour", quantity), "quantity": quantity}
+
+
 def _path(share: PathShare, quantity: str) -> dict[str, Any]:
+    record: dict[str, Any] = {
+        "beam": share.beam, "state": share.state, "path": share.path, "order": share.order, "behind": share.behind
+    }  # fmt: skip
+    if share.week:
+        record["week_at_full_occupancy"] = {
+            "value": in_unit(share.week[quantity], "week"), "unit": unit("week", quantity), "quantity": quantity
+        }  # fmt: skip
+    if share.state == TRAVEL and not share.bound:
+        return {**record, "dose_of_a_pass": _dose(share.rate[quantity], quantity)}
+    return {**record, "rate": _rate(share.rate[quantity], quantity, share.standard_error[quantity])}
+
+
+def _capacity(one: Capacity) -> dict[str, Any]:
+    limited = math.isfinite(one.factor)
     return {
-        "beam": share.beam,
-        "path": share.path,
-        "order": share.order,
-        "rate": _rate(share.rate[quantity], quantity, share.standard_error[quantity]),
+        "beam": one.beam or "all",
+        "times_stated": one.factor if limited else None,
+        "greatest": {"value": one.factor * one.stated, "unit": one.unit} if limited and one.unit else None,
+        "limited_by": {"place": one.place, "goal": one.goal} if limited else None,
+    }
+
+
+def _states(place: PlaceResult, quantity: str) -> dict[str, Any]:
+    """Exposure cycles, a source that is stuck, the day of a survey."""
+    return {
+        "cycles": [
+            {
+                "beam": one.beam,
+                "exposure": {"value": one.seconds, "unit": "s"},
+                "exposed": _dose(one.exposed[quantity], quantity),
+                "out_and_back": _dose(one.passes[quantity], quantity),
+            }
+            for one in place.cycles
+        ],
+        "stuck": [
+            {
+                "source": one.source,
+                "time": {"value": one.seconds, "unit": "s"},
+                "dose": _dose(one.dose[quantity], quantity),
+            }
+            for one in place.stuck
+        ],
+        "survey_rate": None if place.survey_rate is None else _rate(place.survey_rate[quantity], quantity),
     }
 
 
@@ -90,12 +145,17 @@ def _place(place: PlaceResult) -> dict[str, Any]:
         "goals": [_goal(goal) for goal in place.goals],
         "paths": [_path(share, quantity) for share in place.paths if not share.bound],
         "upper_bounds": [_path(share, quantity) for share in place.paths if share.bound],
+        **_states(place, quantity),
         "factors": [
             {
                 "beam": f.beam,
                 "beam_on": {**{base: {"value": s, "unit": "s"} for base, s in f.seconds.items()}},
                 "use_factor": f.use_factor,
                 "weeks": f.weeks,
+                "cycles": None
+                if f.cycles is None
+                else dict(zip(("week", "hour", "day"), f.cycles, strict=True)),
+                "annual_mean": f.annual,
             }
             for f in place.factors
         ],

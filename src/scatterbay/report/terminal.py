@@ -3,10 +3,12 @@
 from __future__ import annotations
 
 from scatterbay import __version__
+from scatterbay.engine.contributions import PLANE_BOUND
 from scatterbay.exposure.results import ABOVE, BELOW, CLOSE, TIME_BASES, Assessment, GoalResult, PlaceResult
-from scatterbay.report.cautions import CAUTIONS, NOT_COVERED
+from scatterbay.report.cautions import CAUTIONS, LOCAL_RULES, NOT_COVERED
 from scatterbay.report.screen import STYLES, Screen
-from scatterbay.report.words import BASES, SYMBOLS, band, goal_words, path_words, percent, spoken
+from scatterbay.report.states import show_capacities, show_states
+from scatterbay.report.words import BASES, SYMBOLS, band, goal_words, made_of, spoken
 from scatterbay.units import significant
 
 
@@ -19,10 +21,15 @@ def show_assessment(assessment: Assessment, screen: Screen) -> None:
         screen.paragraph(caution, indent="  ", first="! ")
     screen.line()
     screen.paragraph(headline(assessment), style=STYLES.get(assessment.worst, ""))
+    if assessment.rule_sets:
+        screen.paragraph(
+            f"{LOCAL_RULES} Goals taken from: {'; '.join(assessment.rule_sets)}.", indent="  ", first="! "
+        )
     for place in assessment.places:
         screen.line()
         _show_place(place, screen)
     screen.line()
+    show_capacities(assessment, screen)
     _show_closing(assessment, screen)
 
 
@@ -61,6 +68,7 @@ def _show_place(place: PlaceResult, screen: Screen) -> None:
     headings = ["time base", "figure", "low to high", "goal", "of goal", "verdict"]
     screen.table(headings, rows, right={1, 3, 4})
     _show_paths(place, screen)
+    show_states(place, screen)
 
 
 def _figure_row(place: PlaceResult, base: str, goal: GoalResult | None) -> list[str]:
@@ -76,15 +84,9 @@ def _figure_row(place: PlaceResult, base: str, goal: GoalResult | None) -> list[
 
 def _show_paths(place: PlaceResult, screen: Screen) -> None:
     quantity = place.quantity
-    added = [share for share in place.paths if not share.bound]
-    total = sum(share.rate[quantity] for share in added)
-    parts = [
-        f"{percent(share.rate[quantity], total)} {path_words(share)} ({share.beam})"
-        for share in sorted(added, key=lambda s: -s.rate[quantity])
-        if share.rate[quantity] > 0.0
-    ]
+    parts = made_of(place)
     screen.paragraph(
-        "; ".join(parts) or "nothing arrives", indent="    ", first=f"  {SYMBOLS[quantity]}, made of "
+        "; ".join(parts) or "nothing arrives", indent="    ", first=f"  the week's {SYMBOLS[quantity]} is "
     )
     if place.all_scatter[quantity] > 0.0:
         single, every = place.single_scatter[quantity], place.all_scatter[quantity]
@@ -93,7 +95,7 @@ def _show_paths(place: PlaceResult, screen: Screen) -> None:
             indent="    ", first="  ",
         )  # fmt: skip
     for share in place.paths:
-        if share.bound:
+        if share.bound and share.path == PLANE_BOUND:
             screen.paragraph(
                 f"primary of {share.beam} if the whole barrier were lit: "
                 f"{spoken(share.rate[quantity], 'rate', quantity)} (upper bound)",

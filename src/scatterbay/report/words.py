@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import re
 
-from scatterbay.exposure.results import Figure, GoalResult, PathShare
+from scatterbay.exposure.results import Figure, GoalResult, PathShare, PlaceResult
 from scatterbay.physics import dose
 from scatterbay.units import choose_unit, factor_of, format_quantity, significant
 
@@ -56,6 +56,25 @@ def band(figure: Figure) -> str:
 def goal_words(goal: GoalResult) -> str:
     """A goal as its author wrote it, less the time base, which the row it stands in names."""
     return re.split(r" in an? | over ", goal.text)[0]
+
+
+MOST_PARTS = 6
+"""Parts that a place's dose is broken down into before the rest is lumped."""
+
+
+def made_of(place: PlaceResult) -> list[str]:
+    """What the dose of a week is made of, largest first."""
+    quantity = place.quantity
+    added = sorted((s for s in place.paths if s.week), key=lambda s: -s.week[quantity])
+    total = sum(share.week[quantity] for share in added)
+    counted = [share for share in added if share.week[quantity] > 0.0]
+    parts = [
+        f"{percent(share.week[quantity], total)} {path_words(share)} ({share.beam})" for share in counted
+    ]
+    if len(parts) <= MOST_PARTS + 1:
+        return parts
+    rest = sum(share.week[quantity] for share in counted[MOST_PARTS:])
+    return [*parts[:MOST_PARTS], f"{percent(rest, total)} in {len(counted) - MOST_PARTS} smaller parts"]
 
 
 def path_words(share: PathShare) -> str:
