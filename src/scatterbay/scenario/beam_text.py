@@ -7,7 +7,7 @@ from collections.abc import Collection
 from dataclasses import dataclass
 
 from scatterbay.scenario.known import nuclide_names
-from scatterbay.scenario.make_ups import make_up
+from scatterbay.scenario.make_ups import filtration
 from scatterbay.scenario.parts import MakeUp
 from scatterbay.units import TextError, nearest, read
 
@@ -57,7 +57,7 @@ def _tube(text: str, match: re.Match[str], materials: Collection[str]) -> NamedB
             f"add what the beam passes, as '{text}, aluminium 3 mm': none is assumed",
         )
     try:
-        found = make_up(filters, materials, open_allowed=False)
+        found = filtration(filters, materials)
     except TextError as problem:
         raise problem.moved(match.start("filters")) from None
     return NamedBeam(text, voltage=voltage, filtration=found)

@@ -52,11 +52,7 @@ def make_up(open_allowed: bool) -> Reader:
 def filtration(value: Data, names: Names) -> parts.MakeUp:
     """The filters of a beam, or ``none``."""
     text = written(value, "'aluminium 3 mm'")
-    return (
-        parts.MakeUp((), "none")
-        if text.strip() == "none"
-        else make_ups.make_up(text, names, open_allowed=False)
-    )
+    return parts.MakeUp((), "none") if text.strip() == "none" else make_ups.filtration(text, names)
 
 
 def floor(value: Data, names: Names) -> tuple[parts.MakeUp, bool]:
