@@ -7,7 +7,7 @@ from typing import Annotated
 import typer
 
 from scatterbay import __version__
-from scatterbay.cli import assess, barrier, new, schema, source
+from scatterbay.cli import assess, barrier, lists, new, schema, source
 
 app = typer.Typer(
     name="scatterbay",
@@ -24,6 +24,9 @@ app = typer.Typer(
 app.command("assess", short_help="Assess every occupied place of a bay.")(assess.command)
 app.command("barrier", short_help="Transmission of one barrier, plane and lit patch.")(barrier.command)
 app.command("source", short_help="Spectrum, value layers and output of a source.")(source.command)
+app.command("lists", short_help="Stock, rule sets, occupancy and other lists to take names from.")(
+    lists.command
+)
 app.command("new", short_help="Copy a commented scenario to start from.")(new.command)
 app.command("schema", short_help="Print the JSON Schema of the scenario file.")(schema.command)
 
