@@ -19,7 +19,7 @@ def test_version() -> None:
     assert done.stdout == f"scatterbay {scatterbay.__version__}\n"
 
 
-@pytest.mark.parametrize("command", ["assess", "barrier", "source", "new", "schema"])
+@pytest.mark.parametrize("command", ["assess", "barrier", "source", "lists", "new", "schema"])
 def test_every_command_has_help_with_an_example(command: str) -> None:
     done = run(command, "--help")
     assert done.returncode == 0

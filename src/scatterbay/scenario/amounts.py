@@ -150,7 +150,11 @@ def _by_lead_equivalent(
         hint = f"add the tube voltage it is stated at, as '{material} {head.text} at 150 kV'"
         raise head.wrong(f"'{head.text}': a lead equivalent holds at one tube voltage only", hint)
     blanked = head.text[: pb.start()] + "  " + head.text[pb.end() :]
-    lead = _checked(_Text(blanked, head.start).read("length"), head)
+    try:
+        lead = _checked(_Text(blanked, head.start).read("length"), head)
+    except TextError as problem:
+        message = problem.message.replace(blanked.strip(), head.text)
+        raise TextError(message, problem.hint, problem.start) from None
     lead = Quantity(lead.value, lead.tolerance, lead.kind, " ".join(blanked.split()))
     ratio = density("lead") / (density(material) * share)
     text = f"{head.text} at {tail.text}"

@@ -105,7 +105,7 @@ def _occupancy() -> _Made:
     remarks = (
         "Suggestions, never applied unasked: the stay of the most exposed person decides, and local rules prevail.",
     )
-    columns = (("space", "kind of space", 32), ("factor", "occupancy", 9), ("also", "also called", 20))
+    columns = (("space", "kind of space", 28), ("factor", "occupancy", 9), ("also", "also called", 22))
     rows: list[_Row] = [(one.space, one.factor, ", ".join(one.also), one.source) for one in spaces().values()]
     return remarks, columns, rows
 

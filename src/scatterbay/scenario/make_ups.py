@@ -65,7 +65,8 @@ def one_layer(text: str, materials: Collection[str] = ()) -> Layer:
 def filtration(text: str, materials: Collection[str] = ()) -> MakeUp:
     """Layers in a beam at its source, each a plain thickness.
 
-    A filter that counts thin is not protective everywhere, so nothing that counts at its least is taken here.
+    A filter that counts thin is not protective everywhere, so what is made to count at its least in a wall is
+    refused here.
 
     Raises
     ------
@@ -73,7 +74,7 @@ def filtration(text: str, materials: Collection[str] = ()) -> MakeUp:
     """
     found = make_up(text, materials, open_allowed=False)
     for layer in found.layers:
-        walls_only = layer.bought_as or layer.at_nominal or layer.density or layer.equivalent
+        walls_only = layer.bought_as or layer.density or layer.equivalent
         if walls_only or amounts.varies(layer):
             said = layer.bought_as or layer.thickness.text
             raise TextError(
