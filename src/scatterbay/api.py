@@ -11,6 +11,7 @@ from scatterbay.scenario.parts import MakeUp, Scenario
 if TYPE_CHECKING:
     import pandas as pd
 
+    from scatterbay.barriers.makeup import Sheets
     from scatterbay.engine.single import PatchGeometry
     from scatterbay.report.barrier import BarrierReport, Published
     from scatterbay.report.source import SourceReport
@@ -59,7 +60,7 @@ def barrier(
     ------
     UsageError : a text that cannot be used. OutOfRangeError : outside the data or the model.
     """
-    from scatterbay.barriers.makeup import sheet
+    from scatterbay.engine.fabric import sheets_of
     from scatterbay.engine.named import spectrum_of
     from scatterbay.engine.single import transmission
     from scatterbay.report.barrier import BarrierReport
@@ -70,7 +71,7 @@ def barrier(
     named, built = named_beam(beam), make_ups.make_up(layers, open_allowed=False)
     tilt = read(angle, "angle").value
     patch = _patch(field, source_distance, point_distance)
-    sheets = tuple(sheet(layer.material, layer.thickness.value) for layer in built.layers)
+    sheets = sheets_of(built, ())
     return BarrierReport(
         named.text,
         built.text,
@@ -79,7 +80,7 @@ def barrier(
         built.layers[-1].material,
         transmission(spectrum_of(named), sheets, tilt, patch),
         _published(named, built, tilt),
-        _barrier_notes(named, patch is not None),
+        (*_barrier_notes(named, patch is not None), *_counted_notes(built, sheets)),
     )
 
 
@@ -139,9 +140,22 @@ def _published(beam: NamedBeam, layers: MakeUp, angle: float) -> Published | Non
             if beam.voltage
             else abs((beam.energy_kev or 0.0) - fit.energy_kev) < 0.5
         )
-        if same and layer.material == fit.material:
-            return Published(fit.transmission(layer.thickness.value), fit.beam, fit.source)
+        if same and layer.material == fit.material and layer.density is None:
+            return Published(fit.transmission(layer.counted_thickness), fit.beam, fit.source)
     return None
+
+
+def _counted_notes(built: MakeUp, sheets: Sheets) -> list[str]:
+    """Where a layer counts as something else than is written: at its least, or by its lead equivalent."""
+    from scatterbay.scenario.least import least_notes
+
+    found = [
+        f"{layer.material} {layer.thickness.text} counted as {1e3 * sheet.thickness:.3g} mm, which stops as much of "
+        "that beam by transport"
+        for layer, sheet in zip(built.layers, sheets, strict=True)
+        if layer.equivalent is not None
+    ]
+    return [f"{note}." for note in dict.fromkeys([*least_notes(built), *found])]
 
 
 def _barrier_notes(beam: NamedBeam, with_patch: bool) -> tuple[str, ...]:
