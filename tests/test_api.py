@@ -36,3 +36,28 @@ def test_assess_and_load() -> None:
 def test_unknown_names_are_attribute_errors() -> None:
     with pytest.raises(AttributeError, match="no attribute 'asses'"):
         _ = scatterbay.asses
+
+
+@pytest.mark.parametrize(
+    ("written", "plain"),
+    [("lead code 4", "lead 1.71 mm"), ("lead code 4 at nominal", "lead 1.80 mm"),
+     ("lead 1.9 mm +/- 10 %", "lead 1.71 mm"),
+     ("lead 1.71 mm to 3 mm", "lead 1.71 mm"), ("lead 2 mm at 10 g/cm3 +/- 0.295 g/cm3", "lead 1.71 mm")],
+)  # fmt: skip
+def test_barrier_counts_layers_as_bought_at_their_least(written: str, plain: str) -> None:
+    """Limit: the same transmission as the plain layer of as much mass, and a note where something counts as less."""
+    beam = "X-ray 100 kV, aluminium 3 mm"
+    found, expected = scatterbay.barrier(beam, written), scatterbay.barrier(beam, plain)
+    assert found.found.plane == pytest.approx(expected.found.plane, rel=1e-3)
+    assert any("counted at" in note for note in found.notes) == (written != plain)
+    assert not any("counted at" in note for note in expected.notes)
+
+
+def test_barrier_of_a_lead_equivalent() -> None:
+    """Limit: at its own voltage it lets through what the lead does, and the thickness it counts as is said."""
+    beam = "X-ray 100 kV, aluminium 3 mm"
+    glass, lead = (
+        scatterbay.barrier(beam, text) for text in ("lead glass 1.71 mm Pb at 100 kV", "lead 1.71 mm")
+    )
+    assert glass.found.plane[0] == pytest.approx(lead.found.plane[0], rel=0.02)
+    assert any("lead glass 1.71 mm Pb at 100 kV counted as" in note for note in glass.notes)

@@ -44,12 +44,13 @@ def make_up(text: str, materials: Collection[str] = ()) -> MakeUp:
 
     Parameters
     ----------
-    text : layers from the inside to the outside, joined by ``+``, or ``open``.
-    materials : names known beside the shipped materials.
+    text : layers from the inside to the outside, joined by ``+``, or ``open``. A layer is a material and an amount, or
+        a stock item such as ``lead code 4``.
+    materials : names known beside the shipped materials; a ``known.Known`` brings stock items as well.
 
     Raises
     ------
-    TextError : unknown material, missing or impossible thickness.
+    TextError : unknown material or stock item, missing or impossible amount.
     """
     from scatterbay.scenario import make_ups
 
