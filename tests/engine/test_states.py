@@ -241,4 +241,4 @@ def test_walls_stand_in_the_way_of_every_state() -> None:
         for s in (thin, thick)
     ]
     for key in ((STORED, STORED), (TRAVEL, TRAVEL)):
-        assert values[1][key] < 1e-4 * values[0][key]
+        assert values[1][key] < 1e-3 * values[0][key]

@@ -100,7 +100,13 @@ def test_a_place_under_a_floor_on_the_ground_lies_in_the_ground() -> None:
     assert "inside the ground" in refusal(text).render()
 
 
-@pytest.mark.parametrize("section", ["sources", "beams", "workload", "people", "places"])
+def test_no_workload_at_all_is_missed_at_every_beam() -> None:
+    """It may be left out where every beam has techniques."""
+    missing = refusal(re.sub(r"^workload:\n(  .*\n)+", "", BASE, flags=re.MULTILINE))
+    assert {p.message.split("' ", 1)[1] for p in missing.problems} == {"has no workload"}
+
+
+@pytest.mark.parametrize("section", ["sources", "beams", "people", "places"])
 def test_a_section_that_is_missing_or_empty(section: str) -> None:
     pattern = re.compile(rf"^{section}:\n(  .*\n)+", re.MULTILINE)
     assert len(pattern.findall(BASE)) == 1

@@ -5,6 +5,7 @@ from __future__ import annotations
 import re
 from dataclasses import replace
 
+from scatterbay.scenario.parts import Leakage
 from scatterbay.units import Quantity, TextError, read
 from scatterbay.units.expression import plain
 
@@ -12,14 +13,38 @@ _TOLERANCE = re.compile(r"\+\s*/?\s*-|±")
 _AT = re.compile(r"(?P<figure>.+?)\s+at\s+(?P<distance>.+)")
 
 
-def leakage_rate(text: str) -> Quantity:
-    """Leakage at 1 m from ``5 mGy/h at 1 m``: an air kerma rate or an ambient dose equivalent rate.
+_FACTORS = re.compile(r"(?P<rate>.+?)\s+at\s+(?P<voltage>[^,]*V)\s*,\s*(?P<current>.+)")
+
+
+def leakage(text: str) -> Leakage:
+    """Leakage from ``5 mGy/h at 1 m``, or with its technique factors, ``1 mGy/h at 1 m at 150 kV, 3.3 mA``.
+
+    The housing's material is left empty.
+
+    Raises
+    ------
+    TextError : no distance, a wrong unit, a value that is not above zero, one technique factor without the other.
+    """
+    ready = plain(text).strip()
+    match = _FACTORS.fullmatch(ready)
+    if match is None:
+        if re.search(r"\d\s*k?V", ready) or re.search(r"\d\s*[um]?A\b", ready):
+            hint = "write '1 mGy/h at 1 m at 150 kV, 3.3 mA' (the current it may run at continuously)"
+            raise TextError(f"'{text}' does not give both leakage technique factors", hint)
+        return Leakage(leakage_rate(ready), "")
+    voltage = _above_zero(match["voltage"], match.start("voltage"), "voltage")
+    current = _above_zero(match["current"], match.start("current"), "current")
+    return Leakage(replace(leakage_rate(match["rate"]), text=text.strip()), "", voltage, current)
+
+
+def leakage_rate(text: str, example: str = "5 mGy/h at 1 m") -> Quantity:
+    """A dose rate at 1 m from ``5 mGy/h at 1 m``: an air kerma rate or an ambient dose equivalent rate.
 
     Raises
     ------
     TextError : no distance, a wrong unit, a value that is not above zero.
     """
-    example = "say where: '5 mGy/h at 1 m' (or in Sv), or 'none'"
+    example = f"say where: '{example}' (or in Sv), or 'none'"
     figure, distance, start = _parts(text)
     rate = _above_zero(figure, 0, "air kerma rate", "ambient dose equivalent rate")
     if distance is None:

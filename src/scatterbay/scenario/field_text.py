@@ -1,4 +1,4 @@
-"""The shape of a beam as text: ``200 mm x 300 mm at 700 mm``, ``cone 40 deg``, ``all round``."""
+"""The shape of a beam as text: ``200 mm x 300 mm at 700 mm``, ``cone 40 deg``, ``panoramic 40 deg``, ``all round``."""
 
 from __future__ import annotations
 
@@ -12,10 +12,12 @@ from scatterbay.units.expression import plain
 
 _FORMS = (
     "write '200 mm x 300 mm at 700 mm' (width x height at a distance from the source), "
-    "'cone 40 deg' (full angle), 'cone 300 mm at 1 m' (diameter at a distance) or 'all round'"
+    "'cone 40 deg' (full angle), 'cone 300 mm at 1 m' (diameter at a distance), 'panoramic 40 deg' (a band all round "
+    "the axis, full angle across it) or 'all round'"
 )
 _RECTANGLE = re.compile(r"(?P<width>[^x*]+?)\s*[x*]\s*(?P<height>[^x*]+?)\s+at\s+(?P<distance>.+)")
 _CONE = re.compile(r"cone\s+(?P<size>.+?)(?:\s+at\s+(?P<distance>.+))?")
+_RING = re.compile(r"panoramic\s+(?P<size>.+)")
 _BARE = re.compile(r"[-+]?[0-9.]+")
 
 
@@ -33,6 +35,10 @@ def beam_field(text: str, turned: float = 0.0) -> Field:
     if match:
         half_angle = _cone(match["size"], match["distance"], match.start("size"))
         return Field("cone", half_angle=half_angle, turned=turned, text=text.strip())
+    match = _RING.fullmatch(ready)
+    if match:
+        half_angle = _cone(match["size"], None, match.start("size"))
+        return Field("ring", half_angle=half_angle, turned=turned, text=text.strip())
     match = _RECTANGLE.fullmatch(ready)
     if match is None:
         raise TextError(f"'{text}' is not a field", _FORMS)

@@ -86,6 +86,29 @@ _ALL = (
     Kind("air kerma per charge", dims(Gy=1, A=-1, s=-1), "Gy/C", ("mGy/(mA s)",), "0.05 mGy/(mA s)"),
     Kind("time per week", dims(s=1, week=-1), "s/week", ("s/week", "min/week", "h/week"), "6 h/week"),
     Kind("charge per week", dims(A=1, s=1, week=-1), "C/week", ("mA min/week",), "400 mA min/week"),
+    Kind("speed", dims(m=1, s=-1), "m/s", ("m/s",), "0.5 m/s"),
+    Kind("kerma-area product", dims(Gy=1, m=2), "Gy m2", ("uGy m2", "Gy cm2"), "20 Gy cm2"),
+    Kind(
+        "kerma-area product per week",
+        dims(Gy=1, m=2, week=-1),
+        "Gy m2/week",
+        ("Gy cm2/week",),
+        "300 Gy cm2/week",
+    ),
+    Kind(
+        "air kerma rate constant",
+        dims(Gy=1, m=2, s=-1, Bq=-1),
+        "Gy m2/(Bq s)",
+        ("mGy m2/(GBq h)",),
+        "0.11 mGy m2/(GBq h)",
+    ),
+    Kind(
+        "ambient dose equivalent rate constant",
+        dims(Sv=1, m=2, s=-1, Bq=-1),
+        "Sv m2/(Bq s)",
+        ("mSv m2/(GBq h)",),
+        "0.14 mSv m2/(GBq h)",
+    ),
 )
 
 KINDS: dict[str, Kind] = {kind.name: kind for kind in _ALL}

@@ -11,7 +11,10 @@ from scatterbay.scenario import parts
 from scatterbay.scenario.build.findings import Findings, names_in, usable, whole
 from scatterbay.scenario.model import use as written
 from scatterbay.scenario.model.document import Document
+from scatterbay.scenario.model.sources import SealedSource, XrayTube
 from scatterbay.scenario.model.values import DIRECTIONS
+from scatterbay.scenario.rules import receptor
+from scatterbay.units import TextError
 
 if TYPE_CHECKING:
     from scatterbay.geometry.solids import Solid
@@ -39,13 +42,59 @@ def build_beams(
         if room is not None:
             _check_inside(path, beam.at, room, findings)
         aim = _aim(path, beam, targets, all_named, findings)
-        if aim is not None:
-            found.append(_beam(name, beam, aim, findings))
+        behind = _behind(path, beam, findings)
+        if aim is not None and _fits_source(path, beam, usable(document.sources), findings):
+            found.append(_beam(name, beam, aim, behind, findings))
     _check_sources_used(document, sources, findings)
     return tuple(found)
 
 
-def _beam(name: str, beam: written.Beam, aim: parts.Point, findings: Findings) -> parts.Beam:
+def _fits_source(
+    path: tuple[str, ...], beam: written.Beam, sources: Mapping[str, object], findings: Findings
+) -> bool:
+    """Collimators stand round sealed sources, presets behind the objects of X-ray tubes."""
+    source = sources.get(beam.source)
+    if beam.collimator is not None and isinstance(source, XrayTube):
+        message = "a collimator stands round a sealed source; a tube's is its housing"
+        findings.wrong((*path, "collimator"), message, "give the tube's leakage instead")
+        return False
+    if beam.collimator is not None and beam.field.kind == "everywhere":
+        message = "a collimator with a field all round leaves nothing for it to stop"
+        findings.wrong(
+            (*path, "collimator"), message, "give the field of its port, or leave the collimator out"
+        )
+        return False
+    if beam.behind is not None and isinstance(source, SealedSource):
+        message = "presets behind the object are for X-ray tubes"
+        findings.wrong((*path, "behind"), message, "add the layers to the barrier, or a body")
+        return False
+    return True
+
+
+def _behind(path: tuple[str, ...], beam: written.Beam, findings: Findings) -> tuple[str, parts.MakeUp] | None:
+    """The preset behind the object."""
+    if beam.behind is None:
+        return None
+    try:
+        preset = receptor(beam.behind)
+    except TextError as problem:
+        findings.wrong((*path, "behind"), problem.message, problem.hint)
+        return None
+    text = (
+        f"The primary is weakened by {preset.make_up.text} for '{preset.name}' ({preset.source}): only right where it "
+        "always stands in the whole beam"
+    )
+    findings.assume("behind the object", text, path[-1])
+    return preset.name, preset.make_up
+
+
+def _beam(
+    name: str,
+    beam: written.Beam,
+    aim: parts.Point,
+    behind: tuple[str, parts.MakeUp] | None,
+    findings: Findings,
+) -> parts.Beam:
     if beam.use_factor is None:
         findings.assume("use factor", "Use factor taken as 1", name)
     if beam.object is None:
@@ -53,7 +102,8 @@ def _beam(name: str, beam: written.Beam, aim: parts.Point, findings: Findings) -
     turned = beam.field_turned.value if beam.field_turned else 0.0
     use = 1.0 if beam.use_factor is None else beam.use_factor
     field = replace(beam.field, turned=turned)
-    return parts.Beam(name, beam.source, beam.at, aim, field, use, beam.object == "in the beam")
+    in_beam = beam.object == "in the beam"
+    return parts.Beam(name, beam.source, beam.at, aim, field, use, in_beam, beam.collimator, behind)
 
 
 def _aim(

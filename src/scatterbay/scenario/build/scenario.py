@@ -13,11 +13,13 @@ from scatterbay.scenario.build.people import build_people
 from scatterbay.scenario.build.places import build_places, check_places
 from scatterbay.scenario.build.room import build_room
 from scatterbay.scenario.build.sources import build_sources
+from scatterbay.scenario.build.states import check_states
+from scatterbay.scenario.build.techniques import expand
 from scatterbay.scenario.build.workload import build_workloads
 from scatterbay.scenario.model.document import NAMED, NAMED_IN_ROOM, Document
 
 LONGEST_NAME = 60
-_NEEDED = ("sources", "beams", "workload", "people", "places")
+_NEEDED = ("sources", "beams", "people", "places")
 
 
 def build(document: Document, path: str, text: str, sha256: str, findings: Findings) -> parts.Scenario | None:
@@ -31,12 +33,16 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
     people = build_people(document, findings)
     places = build_places(document, room, findings)
     beams = build_beams(document, room, _targets(document, bodies, places), findings)
-    workloads = build_workloads(document, {beam.name: beam for beam in beams}, _currents(sources), findings)
+    workloads = build_workloads(
+        document, {beam.name: beam for beam in beams}, {source.name: source for source in sources}, findings
+    )
     solids = solids_of(bodies)
     check_bodies(solids, room, findings)
     check_not_buried(beams, bodies, solids, findings)
+    check_states(sources, beams, room, solids, findings)
     check_places(places, room, solids, beams, findings)
-    together = _never_together(document, findings)
+    expanded = expand(document, sources, beams, workloads, findings)
+    together = _never_together(document, expanded.named, findings)
     options = _options(document, findings)
     if not bodies:
         findings.assume("bodies", "No bodies are given: nothing in the room scatters the beam")
@@ -50,9 +56,9 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
         whole(document.drawing) or "",
         room,
         bodies,
-        sources,
-        beams,
-        workloads,
+        expanded.sources,
+        expanded.beams,
+        expanded.workloads,
         people,
         places,
         together,
@@ -95,18 +101,17 @@ def _targets(
     return {name: known.get(name) for name in named}
 
 
-def _currents(sources: tuple[parts.Source, ...]) -> dict[str, float]:
-    return {s.name: s.current.value if isinstance(s, parts.XrayTube) else 0.0 for s in sources}
-
-
-def _never_together(document: Document, findings: Findings) -> tuple[tuple[str, ...], ...]:
+def _never_together(
+    document: Document, named: Mapping[str, tuple[str, ...]], findings: Findings
+) -> tuple[tuple[str, ...], ...]:
+    """Groups of beams of which one is on at a time, every technique of a beam among them."""
     lists = whole(document.never_together) or ()
     beams = names_in(document.beams)
     for i, names in enumerate(lists):
         for j, name in enumerate(names):
             if beams is not None and name not in beams:
                 findings.unknown(("never together", i, j), "beam", name, beams)
-    return lists
+    return tuple(tuple(made for name in names for made in named.get(name, ())) for names in lists)
 
 
 def _options(document: Document, findings: Findings) -> parts.Options:

@@ -2,16 +2,20 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from datetime import date
 
 from scatterbay.scenario import parts
 from scatterbay.scenario.build.findings import Findings, usable
+from scatterbay.scenario.build.states import container_of, travel_of
+from scatterbay.scenario.known import TUBE_KV
 from scatterbay.scenario.model import sources as written
 from scatterbay.scenario.model.document import Document
 from scatterbay.units import Quantity, read
 
 ANODE_ANGLE = "20 deg"
 HOUSING = "lead"
+DAY = 86400.0
 
 
 def build_sources(document: Document, findings: Findings) -> tuple[parts.Source, ...]:
@@ -79,8 +83,32 @@ def _sealed(name: str, entry: written.SealedSource, findings: Findings) -> parts
         return None
     if not entry.assessed_on:
         findings.assume("decay", "Activity taken as stated, without decay", name)
+    if entry.survey_on and (
+        not entry.on or date.fromisoformat(entry.survey_on) < date.fromisoformat(entry.on)
+    ):
+        message = "a survey needs the date the activity holds for, and comes after it"
+        findings.wrong((*path, "survey on"), message, "add 'on: 2026-03-01', or correct the dates")
+        return None
+    if entry.rate_constant and entry.certificate:
+        message = "both a rate constant and a certified output are given"
+        findings.wrong((*path, "certificate"), message, "keep the one to be used", on_key=True)
+        return None
     leakage = _leakage(name, entry, findings)
-    return parts.SealedSource(name, entry.sealed_source, entry.activity, entry.on, entry.assessed_on, leakage)
+    return parts.SealedSource(
+        name,
+        entry.sealed_source,
+        entry.activity,
+        entry.on,
+        entry.assessed_on,
+        leakage,
+        entry.exchanged_every.value / DAY if entry.exchanged_every else None,
+        entry.survey_on,
+        entry.rate_constant,
+        entry.certificate,
+        container_of(name, entry, findings),
+        travel_of(name, entry, findings),
+        parts.Stuck(entry.stuck.at, entry.stuck.for_) if entry.stuck else None,
+    )
 
 
 def _leakage(
@@ -88,8 +116,8 @@ def _leakage(
 ) -> parts.Leakage | None:
     if "leakage" not in entry.model_fields_set:
         findings.assume("leakage", "No leakage given, so none is counted", name)
-    rate: Quantity | None = entry.leakage
-    if rate is None:
+    stated = entry.leakage
+    if stated is None:
         if entry.housing:
             message = "a housing is given, but no leakage that it hardens"
             findings.wrong(
@@ -98,4 +126,26 @@ def _leakage(
         return None
     if entry.housing is None:
         findings.assume("housing", f"Leakage taken as hardened by {HOUSING}", name)
-    return parts.Leakage(rate, entry.housing or HOUSING)
+    if stated.voltage is not None and isinstance(entry, written.SealedSource):
+        message = "a sealed source has no leakage technique factors"
+        findings.wrong(("sources", name, "leakage"), message, "write '2 mGy/h at 1 m'")
+        return None
+    if stated.voltage is not None and isinstance(entry, written.XrayTube):
+        if stated.voltage.value < entry.x_ray_tube.value:
+            message = (
+                f"the leakage is stated at {stated.voltage.text}, below the tube's {entry.x_ray_tube.text}"
+            )
+            findings.wrong(
+                ("sources", name, "leakage"), message, "technique factors are the highest it may be run at"
+            )
+            return None
+        tube_voltage_problem(findings, ("sources", name, "leakage"), stated.voltage)
+    return replace(stated, housing=entry.housing or HOUSING)
+
+
+def tube_voltage_problem(findings: Findings, path: tuple[str, ...], voltage: Quantity) -> None:
+    """Notes a voltage outside the tube model."""
+    low, high = TUBE_KV
+    if not low <= voltage.value <= high:
+        hint = f"tube spectra are modelled from {low:g} to {high:g} kV"
+        findings.wrong(path, f"'{voltage.text}' lies outside the model", hint)

@@ -20,7 +20,8 @@ V = TypeVar("V")
 Names: TypeAlias = Collection[str]
 """Names of the materials a scenario defines: the context texts are read in."""
 
-_WITH_HYPHEN = {"make_up": "make-up", "x_ray_tube": "x-ray tube", "half_value_layer": "half-value layer"}
+_WITH_HYPHEN = {"make_up": "make-up", "x_ray_tube": "x-ray tube", "half_value_layer": "half-value layer",
+               "kerma_area_product": "kerma-area product"}  # fmt: skip
 
 
 def file_key(name: str) -> str:

@@ -11,7 +11,7 @@ from scatterbay.scenario.model.bodies import Body
 from scatterbay.scenario.model.kinds import Density, Formula, MassFractions, NameLists, Notes, Text
 from scatterbay.scenario.model.room import Room
 from scatterbay.scenario.model.sources import Source
-from scatterbay.scenario.model.use import Beam, Options, People, Place, Workload
+from scatterbay.scenario.model.use import Beam, Options, People, Place, Technique, Workload
 
 
 class Material(Form):
@@ -34,7 +34,12 @@ class Document(Form):
     bodies: Maybe[dict[str, Maybe[Body]]] = Field({}, description="Things that scatter, by name")
     sources: Maybe[dict[str, Maybe[Source]]] = Field(description="What radiates, by name")
     beams: Maybe[dict[str, Maybe[Beam]]] = Field(description="Where sources stand and point, by name")
-    workload: Maybe[dict[str, Maybe[Workload]]] = Field(description="How long each beam is on, by its name")
+    workload: Maybe[dict[str, Maybe[Workload]]] = Field(
+        {}, description="How long each beam is on, by its name"
+    )
+    techniques: Maybe[dict[str, Maybe[Technique]]] = Field(
+        {}, description="Kinds of exposure with a beam, by name, instead of the beam's workload"
+    )
     people: Maybe[dict[str, Maybe[People]]] = Field(description="Groups of people, by name")
     places: Maybe[dict[str, Maybe[Place]]] = Field(description="Where people may stand, by name")
     never_together: Maybe[NameLists | None] = Field(
@@ -43,7 +48,7 @@ class Document(Form):
     options: Maybe[Options | None] = Field(None, description="Choices about the calculation")
 
 
-NAMED = ("materials", "bodies", "sources", "beams", "workload", "people", "places")
+NAMED = ("materials", "bodies", "sources", "beams", "workload", "techniques", "people", "places")
 """Sections whose entries are named by the author."""
 
 NAMED_IN_ROOM = ("sides", "openings", "screens")

@@ -13,6 +13,7 @@ _SECTIONS: dict[str, type[Form]] = {
     "materials": Material,
     "beams": use.Beam,
     "workload": use.Workload,
+    "techniques": use.Technique,
     "people": use.People,
     "places": use.Place,
 }

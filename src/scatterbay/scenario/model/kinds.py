@@ -6,7 +6,8 @@ import math
 from typing import Annotated, TypeAlias
 
 from scatterbay.scenario import parts
-from scatterbay.scenario.at_distance import tube_output
+from scatterbay.scenario.at_distance import leakage_rate, tube_output
+from scatterbay.scenario.counts import amount, collimator, per_week
 from scatterbay.scenario.field_text import beam_field
 from scatterbay.scenario.formulas import mass_fractions
 from scatterbay.scenario.make_ups import one_layer
@@ -42,7 +43,9 @@ _GOAL = schemas.text(
     "6 mSv/year",
 )
 _GOALS = {"anyOf": [{"type": "array", "items": _GOAL, "minItems": 1}, _GOAL]}
-_FIELD = schemas.text("The shape of the beam", "200 mm x 300 mm at 700 mm", "cone 40 deg", "all round")
+_FIELD = schemas.text(
+    "The shape of the beam", "200 mm x 300 mm at 700 mm", "cone 40 deg", "panoramic 40 deg", "all round"
+)
 _TIME = schemas.quantity("time", "charge", examples=("25 min", "40 mA min"))
 _WEEKLY = schemas.quantity("time per week", "charge per week", examples=("6 h/week", "400 mA min/week"))
 _ANGLE = schemas.quantity("angle", examples=("30 deg",))
@@ -123,7 +126,11 @@ OneLayer: TypeAlias = Annotated[
     parts.Layer, FromText(values.in_text_with_names(one_layer, "aluminium 3.2 mm"), _LAYER)
 ]
 Leakage: TypeAlias = Annotated[
-    Quantity | None, FromText(readers.leakage, _rate("5 mGy/h at 1 m", "20 uSv/h at 1 m", "none"))
+    parts.Leakage | None,
+    FromText(
+        readers.leakage,
+        _rate("5 mGy/h at 1 m", "20 uSv/h at 1 m", "1 mGy/h at 1 m at 150 kV, 3.3 mA", "none"),
+    ),
 ]
 Output: TypeAlias = Annotated[
     Quantity,
@@ -142,4 +149,75 @@ Formula: TypeAlias = Annotated[
     ),
 ]
 NameLists: TypeAlias = Annotated[tuple[tuple[str, ...], ...], FromText(readers.name_lists, _NAME_LISTS)]
+RateAtOneMetre: TypeAlias = Annotated[
+    Quantity,
+    FromText(values.in_text(leakage_rate, "20 uSv/h at 1 m"), _rate("20 uSv/h at 1 m", "45 mGy/h at 1 m")),
+]
+RateConstant: TypeAlias = Annotated[
+    Quantity,
+    FromText(
+        values.quantity("air kerma rate constant", "ambient dose equivalent rate constant"),
+        schemas.text("A rate constant", "0.11 mGy m2/(GBq h)", "0.14 mSv m2/(GBq h)"),
+    ),
+]
+Speed: TypeAlias = Annotated[Quantity, FromText(values.quantity("speed"), schemas.quantity("speed"))]
+Time: TypeAlias = Annotated[
+    Quantity, FromText(values.quantity("time"), schemas.quantity("time", examples=("30 min", "90 d")))
+]
+HoursPerWeek: TypeAlias = Annotated[
+    Quantity,
+    FromText(values.quantity("time per week"), schemas.quantity("time per week", examples=("168 h/week",))),
+]
+Charge: TypeAlias = Annotated[
+    Quantity,
+    FromText(values.quantity("charge"), schemas.quantity("charge", examples=("2 mA s", "1.9 mA min"))),
+]
+AreaProductPerWeek: TypeAlias = Annotated[
+    Quantity,
+    FromText(values.quantity("kerma-area product per week"), schemas.quantity("kerma-area product per week")),
+]
+CountPerWeek: TypeAlias = Annotated[
+    Quantity, FromText(values.in_text(per_week, "40/week"), schemas.text("A number per week", "40/week"))
+]
+Amount: TypeAlias = Annotated[
+    Quantity,
+    FromText(
+        values.in_text(amount, "25 min"),
+        schemas.text(
+            "What falls in it, in the terms of the weekly figure", "25 min", "40 mA min", "4 cycles", "8 patients",
+            "20 exposures", "20 Gy cm2",
+        ),
+    ),
+]  # fmt: skip
+Way: TypeAlias = Annotated[
+    tuple[Point3, ...],
+    FromText(
+        readers.path,
+        {
+            "type": "array",
+            "items": schemas.coordinates(3, "A position [x, y, z]", [0.5, 0.5, 0.3]),
+            "minItems": 2,
+            "examples": [[[0.5, 0.5, 0.3], [3, 2, 1]]],
+        },
+    ),
+]
+Shares: TypeAlias = Annotated[
+    tuple[tuple[Quantity, float], ...],
+    FromText(
+        readers.shares,
+        {
+            "type": "object",
+            "additionalProperties": schemas.FACTOR,
+            "minProperties": 1,
+            "examples": [{"70 kV": 0.3, "85 kV": 0.5, "100 kV": 0.2}],
+        },
+    ),
+]
+CollimatorText: TypeAlias = Annotated[
+    parts.Collimator,
+    FromText(
+        values.in_text_with_names(collimator, "tungsten 20 mm"),
+        schemas.text("Material and thickness, or transmission", "tungsten 20 mm", "1/200", "tungsten, 1/200"),
+    ),
+]
 Goals: TypeAlias = Annotated[tuple[parts.Goal, ...], FromText(readers.goals, _GOALS)]

@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
+import itertools
 import math
 from collections.abc import Mapping
 
+from scatterbay.scenario import at_distance, make_ups, parts
 from scatterbay.scenario import goals as goal_text
-from scatterbay.scenario import make_ups, parts
-from scatterbay.scenario.at_distance import leakage_rate
 from scatterbay.scenario.known import (
     HIGHEST_LINE_KEV,
     TUBE_KV,
@@ -16,9 +16,9 @@ from scatterbay.scenario.known import (
     nuclide_names,
 )
 from scatterbay.scenario.model.base import Names, each
-from scatterbay.scenario.model.values import Reader, factor, written
+from scatterbay.scenario.model.values import Point3, Reader, factor, point, written
 from scatterbay.scenario.yaml_tree import Data
-from scatterbay.units import Quantity, TextError, nearest
+from scatterbay.units import Quantity, TextError, nearest, read
 
 GROUND = "on the ground"
 _TOGETHER = "write [[beam a, beam b]]: each inner list names beams of which only one is on at a time"
@@ -64,10 +64,38 @@ def floor(value: Data, names: Names) -> tuple[parts.MakeUp, bool]:
     return make_ups.make_up(layers, names, open_allowed=False), layers != text
 
 
-def leakage(value: Data, names: Names) -> Quantity | None:
-    """Leakage at 1 m, or nothing for ``none``."""
+def leakage(value: Data, names: Names) -> parts.Leakage | None:
+    """Leakage at 1 m, perhaps with its technique factors, or nothing for ``none``."""
     text = written(value, "'5 mGy/h at 1 m'")
-    return None if text.strip() == "none" else leakage_rate(text)
+    return None if text.strip() == "none" else at_distance.leakage(text)
+
+
+def path(value: Data, names: Names) -> tuple[Point3, ...]:
+    """Two or more positions [x, y, z], no two in a row the same."""
+    if not isinstance(value, tuple) or len(value) < 2:
+        raise TextError("a way needs two points or more", "write [[0.5, 0.5, 0.3], [3, 2, 1]]")
+    found = tuple(each(enumerate(value), lambda item: point(item, names)))
+    if any(math.dist(one, other) < 1e-3 for one, other in itertools.pairwise(found)):
+        raise TextError("two points in a row of the way are the same", "leave one out")
+    return found
+
+
+def shares(value: Data, names: Names) -> tuple[tuple[Quantity, float], ...]:
+    """Shares of the tube charge by voltage, which add up to 1."""
+    if not isinstance(value, Mapping) or not value:
+        raise TextError("voltages are a mapping", "write {70 kV: 0.3, 85 kV: 0.5, 100 kV: 0.2}")
+    volts = each(((name, name) for name in value), _tube_voltage)
+    found = each(value.items(), lambda part: factor(part, names))
+    total = sum(found)
+    if abs(total - 1.0) > 0.005:
+        raise TextError(f"the shares add up to {total:.4g}", "they must add up to 1 within 0.005")
+    return tuple((voltage, share / total) for voltage, share in zip(volts, found, strict=True))
+
+
+def _tube_voltage(text: str) -> Quantity:
+    found = read(text, "voltage")
+    tube_voltage(found)
+    return found
 
 
 def goals(value: Data, names: Names) -> tuple[parts.Goal, ...]:

@@ -13,12 +13,20 @@ from scatterbay.scenario.model.kinds import (
     Current,
     Date,
     Filtration,
+    HoursPerWeek,
     Leakage,
     MaterialName,
     Nuclide,
     OneLayer,
     Output,
+    Position,
+    RateAtOneMetre,
+    RateConstant,
+    Speed,
+    Text,
+    Time,
     Voltage,
+    Way,
 )
 
 
@@ -44,6 +52,32 @@ class XrayTube(_Source):
     output: Output | None = Field(None, description="Measured output; the model's is used if left out")
 
 
+class Container(Form):
+    """Where a source is stored: a projector, a source changer."""
+
+    at: Position = Field(description="Where it stands [x, y, z]")
+    leakage: RateAtOneMetre | None = Field(
+        None, description="Dose rate at 1 m from the source in it, as certified"
+    )
+    class_: Text | None = Field(None, description="Class whose limit is taken instead of a certified leakage")
+    housing: MaterialName | None = Field(None, description="What it is shielded with; lead if left out")
+    kept: HoursPerWeek | None = Field(None, description="How long it is stored there; 168 h/week if left out")
+
+
+class Travel(Form):
+    """The way of the bare source from its container to where it is exposed, and back."""
+
+    path: Way = Field(description="Corners of the way, from the container outwards [[x, y, z], ...]")
+    speed: Speed = Field(description="Speed on the way")
+
+
+class Stuck(Form):
+    """What if the source does not come back: a figure of its own, in no other."""
+
+    at: Position = Field(description="Where it is stuck [x, y, z]")
+    for_: Time = Field(description="For how long")
+
+
 class SealedSource(_Source):
     """A sealed radioactive source."""
 
@@ -53,6 +87,19 @@ class SealedSource(_Source):
     assessed_on: Date | None = Field(
         None, description="Date the activity is decayed to; not decayed if left out"
     )
+    survey_on: Date | None = Field(None, description="Day of a planned survey: its readings are predicted")
+    exchanged_every: Time | None = Field(
+        None, description="Time between exchanges; the annual figure takes the mean over it"
+    )
+    rate_constant: RateConstant | None = Field(
+        None, description="Your own rate constant, instead of the table's"
+    )
+    certificate: RateAtOneMetre | None = Field(
+        None, description="Your own dose rate at 1 m at the stated activity, instead of the table's output"
+    )
+    container: Container | None = Field(None, description="Where it is stored")
+    travel: Travel | None = Field(None, description="How it gets to where it is exposed")
+    stuck: Stuck | None = Field(None, description="What if it is stuck")
 
 
 def _which_source(value: Any) -> str | None:

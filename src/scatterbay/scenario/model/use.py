@@ -9,16 +9,25 @@ from pydantic import Field
 from scatterbay.scenario.model.base import Form
 from scatterbay.scenario.model.kinds import (
     Aim,
+    Amount,
     Angle,
+    AreaProductPerWeek,
     BeamField,
-    Duration,
+    Charge,
+    CollimatorText,
+    CountPerWeek,
     Factor,
     Goals,
     Length,
     Name,
+    Output,
     PlanPosition,
     Position,
+    Shares,
+    Text,
+    Time,
     TimePerWeek,
+    Voltage,
     Weeks,
 )
 
@@ -39,14 +48,43 @@ class Beam(Form):
     object: Literal["in the beam", "left out"] | None = Field(
         None, description="Whether bodies weaken the primary beam; 'left out' (bare beam) if left out"
     )
+    collimator: CollimatorText | None = Field(
+        None, description="What stands round a sealed source everywhere but in the field"
+    )
+    behind: Text | None = Field(
+        None, description="Preset attenuation behind the object, such as 'receptor'; none if left out"
+    )
 
 
 class Workload(Form):
-    """How long a beam is on."""
+    """How long a beam is on: give one of beam on, cycles, kerma-area product, patients."""
 
-    beam_on: TimePerWeek = Field(description="Time or tube charge per week")
-    worst_hour: Duration | None = Field(None, description="Beam-on time (or charge) in the worst hour")
-    worst_day: Duration | None = Field(None, description="Beam-on time (or charge) in the worst 8 h")
+    beam_on: TimePerWeek | None = Field(None, description="Time or tube charge per week")
+    cycles: CountPerWeek | None = Field(None, description="Exposure cycles of a sealed source per week")
+    exposure: Time | None = Field(None, description="With cycles: how long the source is exposed in each")
+    kerma_area_product: AreaProductPerWeek | None = Field(None, description="Kerma-area product per week")
+    patients: CountPerWeek | None = Field(None, description="Patients per week")
+    per_patient: Charge | None = Field(None, description="With patients: tube charge for each")
+    voltages: Shares | None = Field(None, description="With patients: shares of the charge by voltage")
+    worst_hour: Amount | None = Field(None, description="What falls in the worst hour, in the same terms")
+    worst_day: Amount | None = Field(None, description="What falls in the worst 8 h, in the same terms")
+    weeks: Weeks | None = Field(None, description="Weeks a year; 52 if left out")
+
+
+class Technique(Form):
+    """One kind of exposure with a beam."""
+
+    beam: Name = Field(description="Name of the beam")
+    voltage: Voltage = Field(description="Tube voltage")
+    charge: Charge = Field(description="Tube charge of one exposure")
+    exposures: CountPerWeek = Field(description="Exposures per week")
+    worst_hour: Amount | None = Field(None, description="Exposures in the worst hour")
+    worst_day: Amount | None = Field(None, description="Exposures in the worst 8 h")
+    in_a_minute: int | None = Field(
+        None, ge=1, le=600, description="Exposures within a minute at most; 1 if left out"
+    )
+    field: BeamField | None = Field(None, description="Shape of the beam; the beam's own if left out")
+    output: Output | None = Field(None, description="Output measured at this voltage")
     weeks: Weeks | None = Field(None, description="Weeks a year; 52 if left out")
 
 
