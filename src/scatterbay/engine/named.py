@@ -25,7 +25,7 @@ def spectrum_of(beam: NamedBeam) -> Spectrum:
         return below(nuclide_spectrum(nuclide(beam.nuclide)), HIGHEST_KEV)[0]
     if beam.voltage is not None and beam.filtration is not None:
         layers = beam.filtration.layers
-        filters = tuple((material(layer.material), layer.thickness.value) for layer in layers)
+        filters = tuple((material(layer.material), layer.counted_thickness) for layer in layers)
         return tube_spectrum(beam.voltage, filters).thinned(1e-9)
     energy = beam.energy_kev or 0.0
     if not LOWEST_KEV <= energy <= HIGHEST_KEV:

@@ -69,7 +69,7 @@ def _scale(source: SealedSource, spectrum: Spectrum, notes: list[Assumption]) ->
         given, text = source.rate_constant, source.rate_constant.text
         own = spectrum.dose_at_1_m()[_row(given.kind)]
     elif source.certificate is not None:
-        given, text = source.certificate, f"{source.certificate.text} at 1 m"
+        given, text = source.certificate, source.certificate.text
         own = source.activity.value * spectrum.dose_at_1_m()[_row(given.kind)]
     else:
         return 1.0

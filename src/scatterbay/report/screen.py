@@ -9,14 +9,10 @@ import textwrap
 from typing import TextIO
 
 from rich.console import Console
-from rich.table import Table
 from rich.text import Text
 
 NARROWEST = 80
 IN_A_PIPE = 100
-WIDEST = 400
-"""Room that a table is laid out in, so that no cell is ever wrapped or cut."""
-
 STYLES = {
     "above": "bold reverse",
     "too close to call": "bold",
@@ -56,15 +52,14 @@ class Screen:
 
     def table(self, headings: list[str], rows: list[list[str]], right: set[int], indent: int = 2) -> None:
         """A table without lines; ``right``: columns that are aligned right. Cells are never cut."""
-        table = Table(box=None, pad_edge=False, padding=(0, 2, 0, 0), show_edge=False)
-        table.add_column("", width=indent - 2 if indent > 2 else 0, no_wrap=True)
-        for k, heading in enumerate(headings):
-            justify = "right" if k in right else "left"
-            table.add_column(heading, justify=justify, no_wrap=True, overflow="ignore")  # type: ignore[arg-type]
-        for row in rows:
-            cells = [Text(cell, style=STYLES.get(cell, "")) for cell in row]
-            table.add_row("", *cells)
-        with self.console.capture() as captured:
-            self.console.print(table, width=WIDEST, soft_wrap=True)
-        for line in captured.get().splitlines():
-            self.stream.write(line.rstrip() + "\n")
+        widths = [max(len(row[k]) for row in [headings, *rows]) for k in range(len(headings))]
+        last = len(headings) - 1
+        for number, row in enumerate([headings, *rows]):
+            line = Text(" " * indent)
+            for k, cell in enumerate(row):
+                padded = cell.rjust(widths[k]) if k in right else cell.ljust(widths[k])
+                style = "bold" if number == 0 else STYLES.get(cell, "")
+                line.append(padded.rstrip() if k == last else padded, style)
+                line.append("" if k == last else "  ")
+            line.rstrip()
+            self.console.print(line, soft_wrap=True)

@@ -8,8 +8,7 @@ from scatterbay.exposure.results import ABOVE, BELOW, CLOSE, TIME_BASES, Assessm
 from scatterbay.report.cautions import CAUTIONS, LOCAL_RULES, NOT_COVERED
 from scatterbay.report.screen import STYLES, Screen
 from scatterbay.report.states import show_capacities, show_states
-from scatterbay.report.words import BASES, SYMBOLS, band, goal_words, made_of, spoken
-from scatterbay.units import significant
+from scatterbay.report.words import BASES, SYMBOLS, band, fraction, goal_words, made_of, spoken
 
 
 def show_assessment(assessment: Assessment, screen: Screen) -> None:
@@ -79,7 +78,7 @@ def _figure_row(place: PlaceResult, base: str, goal: GoalResult | None) -> list[
     cells = [name, spoken(figure.value, base, figure.quantity), band(figure)]
     if goal is None:
         return [*cells, "", "", ""]
-    return [*cells, goal_words(goal), significant(goal.fraction), goal.verdict.removesuffix(" to call")]
+    return [*cells, goal_words(goal), fraction(goal), goal.verdict.removesuffix(" to call")]
 
 
 def _show_paths(place: PlaceResult, screen: Screen) -> None:

@@ -86,4 +86,11 @@ def path_words(share: PathShare) -> str:
 def percent(part: float, whole: float) -> str:
     """A share as a percentage with two digits where it is small."""
     share = 100.0 * part / whole if whole > 0.0 else 0.0
+    if 0.0 < share < 0.1:
+        return "< 0.1 %"
     return f"{share:.0f} %" if share >= 9.5 else f"{share:.2g} %"
+
+
+def fraction(goal: GoalResult) -> str:
+    """A figure over its goal, two digits."""
+    return "< 0.001" if goal.fraction < 1e-3 else significant(goal.fraction)

@@ -13,7 +13,7 @@ _TOLERANCE = re.compile(r"\+\s*/?\s*-|±")
 _AT = re.compile(r"(?P<figure>.+?)\s+at\s+(?P<distance>.+)")
 
 
-_FACTORS = re.compile(r"(?P<rate>.+?)\s+at\s+(?P<voltage>[^,]*V)\s*,\s*(?P<current>.+)")
+_FACTORS = re.compile(r"(?P<rate>.+)\s+at\s+(?P<voltage>[^,]*V)\s*,\s*(?P<current>.+)")
 
 
 def leakage(text: str) -> Leakage:
