@@ -108,7 +108,7 @@ def test_the_lead_of_a_housing_from_its_leakage_technique_factors() -> None:
 
 def test_leakage_by_charge_and_voltage() -> None:
     """At the voltage of its factors 0.876 mGy/h for 3.3 mA is 0.876 / 198 mGy a mA min, at any current; at 100 kV the
-    same lead lets less through, as the spectra say; not by much, as lead is clearest just below its K edge at 88 keV."""
+    same lead lets less through, as the spectra say; not by much: lead is clearest just below its K edge, 88 keV."""
     full = output_of(tube("150 kV", "3.3 mA", leakage=FACTORS))
     pulsed = output_of(tube("150 kV", "400 mA", leakage=FACTORS))
     soft = output_of(tube("100 kV", "400 mA", leakage=FACTORS))

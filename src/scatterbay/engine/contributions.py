@@ -73,19 +73,43 @@ class Contributions:
     balances: dict[str, Balance]
 
 
-def contributions(scene: Scene) -> Contributions:
-    """Compute every row of a scene."""
+@dataclass(frozen=True)
+class Effort:
+    """How many first collisions and walks a replicate has, and the most batches of them."""
+
+    first: int
+    walks: int
+    batches: int
+
+
+FULL = Effort(FIRST_PER_REPLICATE, WALKS_PER_REPLICATE, MOST_BATCHES)
+THIN = Effort(64, 32, 1)
+"""For many places at once: standard errors of several per cent."""
+
+Kept = dict[tuple[int, int], tuple[ScatterPoints, Balance]]
+"""Scatter points by number of the beam and batch, to be used again with other walls."""
+
+
+def contributions(scene: Scene, effort: Effort = FULL, kept: Kept | None = None) -> Contributions:
+    """Compute every row of a scene.
+
+    ``kept`` is filled with the scatter points, and those in it already are used: the same points then serve scenes
+    that differ in their walls or places only, so that their results differ by that alone.
+    """
+    points = {} if kept is None else kept
     rows: list[Contribution] = []
     balances = {}
     for number, beam in enumerate(scene.beams):
         steady = _primary_rows(scene, beam) + _leakage_rows(scene, beam) + _collimator_rows(scene, beam)
-        scattered, balances[beam.name] = _scatter_rows(scene, number, steady)
+        scattered, balances[beam.name] = _scatter_rows(scene, number, steady, effort, points)
         rows += steady + scattered
     rows += [row for place in scene.places for row in rows_without_beam(scene, place)]
     return Contributions(tuple(rows), balances)
 
 
-def scatter_points(scene: Scene, number: int, batch: int = 0) -> tuple[ScatterPoints, Balance]:
+def scatter_points(
+    scene: Scene, number: int, batch: int = 0, effort: Effort = FULL
+) -> tuple[ScatterPoints, Balance]:
     """Scatter points of all orders of one beam, and where their energy went: one batch.
 
     Walks start from the first half of each replicate's first collisions; their weights make up for it, since
@@ -97,10 +121,10 @@ def scatter_points(scene: Scene, number: int, batch: int = 0) -> tuple[ScatterPo
         importance = _importance(scene, beam, group)
         common = (beam.origin, beam.field, beam.spectrum, importance, around.bodies, group, around.ladder)
         stream = (scene.seed, number, group, batch)
-        first = first_collisions(*common, FIRST_PER_REPLICATE, REPLICATES, stream)
+        first = first_collisions(*common, effort.first, REPLICATES, stream)
         if not len(first):
             continue
-        starts = first_collisions(*common, WALKS_PER_REPLICATE, REPLICATES, stream)
+        starts = first_collisions(*common, effort.walks, REPLICATES, stream)
         walk = walk_on(starts, around.bodies, around.ladder, generator(*stream, 1))
         parts += [first, walk.points]
         balance.add(walk.balance)
@@ -108,7 +132,7 @@ def scatter_points(scene: Scene, number: int, batch: int = 0) -> tuple[ScatterPo
 
 
 def _scatter_rows(
-    scene: Scene, number: int, steady: list[Contribution]
+    scene: Scene, number: int, steady: list[Contribution], effort: Effort, kept: Kept
 ) -> tuple[list[Contribution], Balance]:
     """Single and higher scatter at every place, from as many batches as the errors ask for."""
     beam, places = scene.beams[number], scene.places
@@ -118,8 +142,10 @@ def _scatter_rows(
         if not row.bound:
             other[[p.name for p in places].index(row.place)] += row.values[0]
     sums, balance = np.zeros((len(places), 2 * REPLICATES, len(dose.QUANTITIES))), Balance()
-    for batch in range(MOST_BATCHES):
-        points, counted = scatter_points(scene, number, batch)
+    for batch in range(effort.batches):
+        if (number, batch) not in kept:
+            kept[number, batch] = scatter_points(scene, number, batch, effort)
+        points, counted = kept[number, batch]
         if not len(points):
             return [], balance
         balance.add(counted)
