@@ -28,6 +28,7 @@ class Fabric:
 
     stacks: tuple[tuple[Sheets, ...], ...]
     cells: dict[int, Cells]
+    names: tuple[str, ...]
     assumptions: tuple[Assumption, ...]
 
     @property
@@ -86,7 +87,8 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
             continue
         kinds, cells[number] = _cells(name, base, openings, panels, sheeter)
         stacks.append(kinds)
-    return Fabric(tuple(stacks), cells, tuple(sheeter.notes.values()))
+    names = tuple(name for name, _ in own)
+    return Fabric(tuple(stacks), cells, names, tuple(sheeter.notes.values()))
 
 
 def _cells(

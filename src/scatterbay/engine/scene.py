@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Mapping, Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, field, replace
 
 import numpy as np
 from numpy.typing import NDArray
@@ -71,6 +71,8 @@ class Scene:
     stored: tuple[StoredSource, ...] = ()
     travelling: tuple[TravellingSource, ...] = ()
     stuck: tuple[StuckSource, ...] = ()
+    face_numbers: Mapping[str, int] = field(default_factory=dict)
+    """Number of each side, of the ceiling, the floor and each screen, by name."""
 
 
 def build_scene(scenario: Scenario) -> Scene:
@@ -109,7 +111,13 @@ def build_scene(scenario: Scenario) -> Scene:
         outputs,
         tuple(_timed(load, beams) for load in scenario.workloads),
         *_states(scenario, outputs, defined),
+        {name: number for number, name in enumerate(fabric.names)},
     )
+
+
+def at_places(scene: Scene, scenario: Scenario) -> Scene:
+    """The same scene for the places of another scenario, which differs from the scene's own in its places only."""
+    return replace(scene, places=scene_places(scenario, scene.around.walls, scene.around.bodies))
 
 
 def _states(
