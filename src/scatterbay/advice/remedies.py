@@ -116,7 +116,7 @@ def remedy(scenario: Scenario, found: Scan, scene: Scene, material: str, limit: 
                 where = widened(found.surface, where, WIDER)
             new = {p.on_face for p in trial.points}
             trial = _Trial(scenario, [*trial.points, *(p for p in left if p.on_face not in new)])
-        result = _on_better_face(trial, found, where, material, limit)
+        result = _on_better_face(trial, found, where, material, limit, result.lining)
     return result
 
 
@@ -126,34 +126,48 @@ def _well_inside(where: Rectangle, at: tuple[float, float]) -> bool:
     )
 
 
-def _on_better_face(trial: _Trial, found: Scan, where: Rectangle, material: str, limit: float) -> Remedy:
-    """Solve on the inner face; on the outer one where the same thickness does better there."""
+def _on_better_face(
+    trial: _Trial, found: Scan, where: Rectangle, material: str, limit: float, before: Lining | None = None
+) -> Remedy:
+    """Solve on the inner face; on the outer one where the same thickness does better there.
+
+    ``before``: the answer on a smaller rectangle or for fewer points, to start from on the same face.
+    """
+    if before is not None:
+        again = _solve(trial, replace(before, where=where), limit)
+        if not again.why_not:
+            return _bought(trial, replace(again, other_face=_other(trial, again)), limit)
     inner = _solve(trial, Lining(found.surface, where, INSIDE, material, 0.0), limit)
     if inner.why_not:
         return inner
     over = trial.ratio(replace(inner.lining, face=OUTSIDE))
     if over > inner.ratio * (1.0 - CLOSE_ENOUGH):
         return _bought(trial, replace(inner, other_face=over), limit)
-    outer = _solve(trial, replace(inner.lining, face=OUTSIDE, thickness=0.0), limit)
-    back = trial.ratio(replace(outer.lining, face=INSIDE))
-    return _bought(trial, replace(outer, other_face=back), limit)
+    outer = _solve(trial, replace(inner.lining, face=OUTSIDE), limit)
+    return _bought(trial, replace(outer, other_face=_other(trial, outer)), limit)
+
+
+def _other(trial: _Trial, one: Remedy) -> float:
+    """The ratio with the same lining on the other face."""
+    return trial.ratio(replace(one.lining, face=OUTSIDE if one.lining.face == INSIDE else INSIDE))
 
 
 def _solve(trial: _Trial, lining: Lining, limit: float) -> Remedy:
-    """The least thickness for which the worst ratio is at most the limit, and as near it as CLOSE_ENOUGH."""
+    """The least thickness for which the worst ratio is at most the limit, and as near it as CLOSE_ENOUGH.
+
+    The lining's own thickness, where it has one, is tried first.
+    """
 
     def at(thickness: float) -> float:
         return math.log(max(trial.ratio(replace(lining, thickness=thickness)), 1e-12) / limit)
 
-    low, high, at_low = (
-        0.0,
-        FIRST_TRY.get(lining.material, 2e-2),
-        math.log(max(p.ratio for p in trial.points) / limit),
-    )
+    first = FIRST_TRY.get(lining.material, 2e-2)
+    low, at_low = 0.0, math.log(max(p.ratio for p in trial.points) / limit)
+    high = lining.thickness or first
     at_high = at(high)
     while at_high > 0.0:
         gain = (at_low - at_high) / (high - low)
-        if high >= THICKEST or (gain < 1e-3 / high and high > 4.0 * FIRST_TRY.get(lining.material, 2e-2)):
+        if high >= THICKEST or (gain < 1e-3 / high and high > 4.0 * first):
             stuck = math.exp(at_high)
             why = (
                 f"{1e3 * high:.0f} mm of {lining.material} still leaves {stuck:.2g} times what is allowed: the rest "

@@ -4,19 +4,19 @@ from __future__ import annotations
 
 import io
 from dataclasses import dataclass
-from functools import cached_property
+from functools import cached_property, lru_cache
 
 import numpy as np
 from numpy.typing import NDArray
 
-from scatterbay.barriers.makeup import Sheets, k_elements
+from scatterbay.barriers.makeup import Sheet, Sheets, k_elements
 from scatterbay.errors import OutOfRangeError
 from scatterbay.physics import dose
 from scatterbay.physics.interpolate import cubic, spline_matrix
 from scatterbay.physics.medium import medium
 from scatterbay.physics.slab.grid import HIGHEST_KEV, LOWEST_KEV, Grid, grid_for
 from scatterbay.physics.slab.kernel import Kernel, build_kernel
-from scatterbay.physics.slab.layer import build_layer
+from scatterbay.physics.slab.layer import Layer, build_layer
 from scatterbay.physics.slab.wall import wall_answer
 
 Array = NDArray[np.float64]
@@ -140,7 +140,7 @@ def build_answer(sheets: Sheets) -> Answer:
     """Transport through the sheets, from scratch."""
     grid = grid_for(k_elements(sheets))
     kernels = {one.fractions: _kernel(one.fractions, grid) for one in sheets}
-    layers = [build_layer(kernels[one.fractions], grid, one.density_g_cm3, one.thickness) for one in sheets]
+    layers = [_layer(one, grid.k_elements) for one in sheets]
     result = wall_answer(layers)
     order = np.argsort(grid.cosines)
     return Answer(
@@ -168,6 +168,13 @@ def check_energy(energy_kev: Array) -> Array:
             f"got {energy.min():g} to {energy.max():g} keV"
         )
     return energy
+
+
+@lru_cache(maxsize=16)
+def _layer(one: Sheet, k_elements: tuple[int, ...]) -> Layer:
+    """A layer; the last few are kept, as walls that are tried out share most of theirs."""
+    grid = grid_for(k_elements)
+    return build_layer(_kernel(one.fractions, grid), grid, one.density_g_cm3, one.thickness)
 
 
 _KERNELS: dict[tuple[object, ...], Kernel] = {}

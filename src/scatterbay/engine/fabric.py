@@ -18,16 +18,21 @@ GROUND = ("earth", 3.0)
 """What stands for the ground under a floor that lies on it."""
 
 
+_Kind = tuple[Sheets, bool]
+"""A make-up, and whether it is in an opening."""
+
+
 @dataclass(frozen=True)
 class Fabric:
     """The faces by number: sides, ceiling, floor, screens.
 
     ``stacks``: the make-ups of each face, by kind; kind 0 is what most of it is made of. ``cells``: where which kind
-    is, of the faces that have several.
+    is, of the faces that have several. ``opened``: mask of the kinds that are in openings, of the same faces.
     """
 
     stacks: tuple[tuple[Sheets, ...], ...]
     cells: dict[int, Cells]
+    opened: dict[int, int]
     names: tuple[str, ...]
     assumptions: tuple[Assumption, ...]
 
@@ -78,7 +83,7 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
     own += [("ceiling", sheeter.sheets(room.ceiling)), ("floor", floor)]
     own += [(screen.name, sheeter.sheets(screen.make_up)) for screen in room.screens]
     stacks: list[tuple[Sheets, ...]] = []
-    cells = {}
+    cells, opened = {}, {}
     for number, (name, base) in enumerate(own):
         openings = [one for one in room.openings if one.on_face == name]
         panels = [one for one in room.panels if one.face == name]
@@ -86,26 +91,28 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
             stacks.append((base,))
             continue
         kinds, cells[number] = _cells(name, base, openings, panels, sheeter)
-        stacks.append(kinds)
+        stacks.append(tuple(stack for stack, _ in kinds))
+        opened[number] = sum(1 << k for k, (_, in_opening) in enumerate(kinds) if in_opening)
     names = tuple(name for name, _ in own)
-    return Fabric(tuple(stacks), cells, names, tuple(sheeter.notes.values()))
+    return Fabric(tuple(stacks), cells, opened, names, tuple(sheeter.notes.values()))
 
 
 def _cells(
     name: str, base: Sheets, openings: Sequence[Opening], panels: Sequence[Panel], sheeter: _Sheeter
-) -> tuple[tuple[Sheets, ...], Cells]:
+) -> tuple[tuple[_Kind, ...], Cells]:
     """The kinds of a face, its own first, and where they are."""
     rectangles = [Rectangle(one.low, one.high) for one in openings]
     rectangles += [Rectangle(one.low, one.high) for one in panels]
     first, second = cut(rectangles)
     if max(first.size, second.size) > MOST_EDGES:
         raise OutOfRangeError(f"'{name}' is cut along more than {MOST_EDGES} edges in one direction")
-    kinds: dict[Sheets, int] = {base: 0}
+    kinds: dict[_Kind, int] = {(base, False): 0}
     numbers = np.zeros((first.size + 1, second.size + 1), dtype=np.int64)
     for i, x in enumerate(middles(first)):
         for j, y in enumerate(middles(second)):
             stack = _stack_at(name, base, (float(x), float(y)), openings, panels, sheeter)
-            numbers[i, j] = kinds.setdefault(stack, len(kinds))
+            in_opening = any(Rectangle(one.low, one.high).holds(float(x), float(y)) for one in openings)
+            numbers[i, j] = kinds.setdefault((stack, in_opening), len(kinds))
     if len(kinds) > MOST_KINDS:
         raise OutOfRangeError(f"'{name}' has more than {MOST_KINDS} different make-ups")
     return tuple(kinds), Cells(first, second, numbers)

@@ -11,7 +11,6 @@ from numpy.typing import NDArray
 
 from scatterbay.engine.bodies import Bodies
 from scatterbay.engine.walls import Walls
-from scatterbay.geometry.enclosure import OWN
 from scatterbay.scenario.parts import Scenario, SealedSource
 
 Array = NDArray[np.float64]
@@ -31,8 +30,8 @@ class ScenePlace:
     """A place as numbers.
 
     ``enclosed``: every way to it from where anything radiates leads through a barrier. ``behind``: what lies between
-    it and each thing that radiates: open (nothing on some line), lining (a heavy layer, an opening or a panel on
-    some line), or wall.
+    it and each thing that radiates: open (nothing on some line), lining (a heavy layer, an opening or the edge of a
+    panel on some line), or wall.
     """
 
     name: str
@@ -83,8 +82,10 @@ def _behind(walls: Walls, points: Array, place: Array) -> str:
         options = walls.options(group.signature)
         if not all(options):
             return "open"
-        several = any(mask != OWN for _, _, mask in group.signature)
-        if several or any(_is_heavy(one.fractions) for stack in options for one in stack):
+        edges = any(
+            mask & (mask - 1) or mask & walls.opened.get(face, 0) for face, _, mask in group.signature
+        )
+        if edges or any(_is_heavy(one.fractions) for stack in options for one in stack):
             found = "lining"
     return found
 

@@ -11,7 +11,7 @@ from scatterbay.barriers.makeup import Sheets
 from scatterbay.engine.arrive import Surroundings, dose_from_emitters
 from scatterbay.engine.bodies import Bodies
 from scatterbay.engine.fields import BeamField
-from scatterbay.engine.walls import Group, Signature, Walls
+from scatterbay.engine.walls import Group, Signature
 from scatterbay.geometry.enclosure import Crossings
 from scatterbay.physics import dose
 from scatterbay.physics.spectrum import Spectrum
@@ -221,5 +221,5 @@ def with_prefix(beam: PrimaryBeam, prefix: Sheets, around: Surroundings) -> Surr
     first = [(group.signature[0][0], group.rays) for group in around.walls.groups(met) if group.signature]
     least = min((float(met.on(face, rays)[1].min()) for face, rays in first), default=1.0)
     thinned = tuple(replace(one, thickness=least * one.thickness) for one in prefix)
-    walls = Walls(around.walls.enclosure, around.walls.stacks, around.ladder, thinned)
+    walls = replace(around.walls, prefix=thinned, _behind={})
     return Surroundings(around.bodies, walls, around.ladder)

@@ -93,7 +93,7 @@ def build_scene(scenario: Scenario) -> Scene:
     rungs = ladder(edges_of(stacks, scenario, defined))
     bodies = bodies_of(scenario, defined, rungs)
     room = _enclosure(scenario, fabric)
-    walls = Walls(room, fabric.stacks, rungs)
+    walls = Walls(room, fabric.stacks, rungs, opened=fabric.opened)
     notes: list[Assumption] = [a for output in outputs.values() for a in output.assumptions]
     notes += fabric.assumptions
     beams = []

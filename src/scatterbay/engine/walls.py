@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import itertools
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass, field
 
 import numpy as np
@@ -90,6 +90,8 @@ class Walls:
     stacks: Sequence[tuple[Sheets, ...]]
     ladder: Ladder
     prefix: Sheets = ()
+    opened: Mapping[int, int] = field(default_factory=dict)
+    """Mask of the kinds that are in openings, by face number."""
     _behind: dict[Signature, Behind] = field(default_factory=dict)
 
     def options(self, signature: Signature) -> list[Sheets]:
