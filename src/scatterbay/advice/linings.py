@@ -126,7 +126,11 @@ def to_line(scan: Scan, scene: Scene, overlap: float) -> Rectangle:
     All of the surface where that is most of it.
     """
     surface = scan.surface
-    bad = [point for point, ratio in zip(scan.points, scan.ratios, strict=True) if ratio > 1.0]
+    bad = [
+        point
+        for point, ratio in zip(scan.points, scan.ratios, strict=True)
+        if ratio > 1.0 and point.on_face not in scan.openings
+    ]
     crossed = [np.array([p.on_face for p in bad])]
     crossed += [found for point in bad if (found := _crossings(scan, scene, point)).size]
     spots = np.concatenate(crossed)

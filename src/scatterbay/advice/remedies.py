@@ -97,8 +97,14 @@ def remedy(scenario: Scenario, found: Scan, scene: Scene, material: str, limit: 
     ----------
     limit : upper end over goal that every point must reach; below 1 keeps a margin.
     """
+    own = [point for point in found.close if point.on_face not in found.openings]
+    if not any(point.ratio > limit for point in own):
+        nothing = Lining(found.surface, whole(found.surface), INSIDE, material, 0.0)
+        return Remedy(
+            nothing, found.worst.ratio, why_not="what is missed is behind openings: see to those first"
+        )
     where = to_line(found, scene, OVERLAP)
-    trial = _Trial(scenario, found.close)
+    trial = _Trial(scenario, own)
     result = _on_better_face(trial, found, where, material, limit)
     for _ in range(ROUNDS):
         if result.why_not:
@@ -108,9 +114,10 @@ def remedy(scenario: Scenario, found: Scan, scene: Scene, material: str, limit: 
         else:
             again = scan(with_lining(scenario, result.lining), found.surface, found.standings, found.gap,
                          kept_close=trial.kept)  # fmt: skip
-            left = [p for p in again.close if p.ratio > limit * (1.0 + CLOSE_ENOUGH)]
+            mine = [p for p in again.close if p.on_face not in again.openings]
+            left = [p for p in mine if p.ratio > limit * (1.0 + CLOSE_ENOUGH)]
             if not left:
-                return replace(result, ratio=again.worst.ratio)
+                return replace(result, ratio=max(p.ratio for p in mine))
             inside = [p for p in left if _well_inside(where, p.on_face)]
             if len(inside) < len(left):
                 where = widened(found.surface, where, WIDER)

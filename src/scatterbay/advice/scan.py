@@ -71,6 +71,8 @@ class Scan:
     close: tuple[PointResult, ...]
     standings: tuple[Standing, ...]
     gap: float
+    openings: frozenset[tuple[float, float]] = frozenset()
+    """Points, by their coordinates on the face, some of whose rays pass an opening in it."""
 
     @property
     def worst(self) -> PointResult:
@@ -126,6 +128,10 @@ def scan(
     """
     built = scene or build_scene(scenario)
     grid = scan_points(scenario, surface, gap, step)
+    met = _met(built, surface, grid)
+    mine = built.of_opening.get(surface.host)
+    if mine is not None:
+        grid, met = _some(grid, (met & mine) != 0), met[(met & mine) != 0]
     if not len(grid.position):
         raise UsageError(f"no point behind '{surface.host}' stands free")
     places = [_place(k, grid, standings) for k in range(len(grid.position))]
@@ -139,7 +145,25 @@ def scan(
     close = judged(scenario, built, [places[k] for k in worst_of(points, grid)], thin=False, kept=kept_close)
     if told:
         told(1.0)
-    return Scan(surface, grid, tuple(points), tuple(close), tuple(standings), gap)
+    other = built.around.walls.opened.get(built.face_numbers[surface.face], 0) & ~(mine or 0)
+    passed = frozenset(p.on_face for p, mask in zip(points, met, strict=True) if int(mask) & other)
+    return Scan(surface, grid, tuple(points), tuple(close), tuple(standings), gap, passed)
+
+
+def _met(scene: Scene, surface: Surface, grid: ScanPoints) -> NDArray[np.int64]:
+    """Kinds of make-up that the lines from sources and bodies to each point meet on the face, as masks (n,)."""
+    room, number = scene.around.walls.enclosure, scene.face_numbers[surface.face]
+    found = np.zeros(len(grid.position), dtype=np.int64)
+    looks = [beam.origin for beam in scene.beams] + [part.solid.centre for part in scene.around.bodies.parts]
+    for look in looks:
+        for hit in room.crossings(np.broadcast_to(look, grid.position.shape), grid.position).hits:
+            if hit.face == number:
+                found[hit.rays] |= hit.mask
+    return found
+
+
+def _some(grid: ScanPoints, kept: NDArray[np.bool_]) -> ScanPoints:
+    return replace(grid, on_face=grid.on_face[kept], position=grid.position[kept], index=grid.index[kept])
 
 
 Candidate = tuple[tuple[float, float], Place, Standing]

@@ -119,11 +119,13 @@ def _plan_area(room: Room) -> float:
 
 
 def scan_points(scenario: Scenario, surface: Surface, gap: float = GAP, step: float = STEP) -> ScanPoints:
-    """A grid of points at most ``step`` apart, at ``gap`` from the outer face.
+    """A grid of points at most ``step`` apart, at ``gap`` from the outer face; for an opening all of its face's.
 
     Over a ceiling and under a floor people are judged at the trade's heights where the storeys are given, else at
     the gap. Points inside the building's own fabric are left out.
     """
+    if surface.host != surface.face:
+        surface = surface_of(scenario, surface.face)
     axes, spacing = [], []
     for low, high in zip(surface.low, surface.high, strict=True):
         margin = min(MARGIN, 0.25 * (high - low))

@@ -18,8 +18,8 @@ GROUND = ("earth", 3.0)
 """What stands for the ground under a floor that lies on it."""
 
 
-_Kind = tuple[Sheets, bool]
-"""A make-up, and whether it is in an opening."""
+_Kind = tuple[Sheets, str]
+"""A make-up, and the opening it is in; empty in none."""
 
 
 @dataclass(frozen=True)
@@ -27,12 +27,14 @@ class Fabric:
     """The faces by number: sides, ceiling, floor, screens.
 
     ``stacks``: the make-ups of each face, by kind; kind 0 is what most of it is made of. ``cells``: where which kind
-    is, of the faces that have several. ``opened``: mask of the kinds that are in openings, of the same faces.
+    is, of the faces that have several. ``opened``: mask of the kinds that are in openings, of the same faces;
+    ``of_opening``: by the opening's name, what is in openings of its own left out.
     """
 
     stacks: tuple[tuple[Sheets, ...], ...]
     cells: dict[int, Cells]
     opened: dict[int, int]
+    of_opening: dict[str, int]
     names: tuple[str, ...]
     assumptions: tuple[Assumption, ...]
 
@@ -84,6 +86,7 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
     own += [(screen.name, sheeter.sheets(screen.make_up)) for screen in room.screens]
     stacks: list[tuple[Sheets, ...]] = []
     cells, opened = {}, {}
+    of_opening: dict[str, int] = {one.name: 0 for one in room.openings}
     for number, (name, base) in enumerate(own):
         openings = [one for one in room.openings if one.on_face == name]
         panels = [one for one in room.panels if one.face == name]
@@ -92,9 +95,12 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
             continue
         kinds, cells[number] = _cells(name, base, openings, panels, sheeter)
         stacks.append(tuple(stack for stack, _ in kinds))
-        opened[number] = sum(1 << k for k, (_, in_opening) in enumerate(kinds) if in_opening)
+        opened[number] = sum(1 << k for k, (_, opening) in enumerate(kinds) if opening)
+        for k, (_, opening) in enumerate(kinds):
+            if opening:
+                of_opening[opening] |= 1 << k
     names = tuple(name for name, _ in own)
-    return Fabric(tuple(stacks), cells, opened, names, tuple(sheeter.notes.values()))
+    return Fabric(tuple(stacks), cells, opened, of_opening, names, tuple(sheeter.notes.values()))
 
 
 def _cells(
@@ -106,26 +112,25 @@ def _cells(
     first, second = cut(rectangles)
     if max(first.size, second.size) > MOST_EDGES:
         raise OutOfRangeError(f"'{name}' is cut along more than {MOST_EDGES} edges in one direction")
-    kinds: dict[_Kind, int] = {(base, False): 0}
+    kinds: dict[_Kind, int] = {(base, ""): 0}
     numbers = np.zeros((first.size + 1, second.size + 1), dtype=np.int64)
     for i, x in enumerate(middles(first)):
         for j, y in enumerate(middles(second)):
-            stack = _stack_at(name, base, (float(x), float(y)), openings, panels, sheeter)
-            in_opening = any(Rectangle(one.low, one.high).holds(float(x), float(y)) for one in openings)
-            numbers[i, j] = kinds.setdefault((stack, in_opening), len(kinds))
+            kind = _kind_at(name, base, (float(x), float(y)), openings, panels, sheeter)
+            numbers[i, j] = kinds.setdefault(kind, len(kinds))
     if len(kinds) > MOST_KINDS:
         raise OutOfRangeError(f"'{name}' has more than {MOST_KINDS} different make-ups")
     return tuple(kinds), Cells(first, second, numbers)
 
 
-def _stack_at(
+def _kind_at(
     name: str,
     base: Sheets,
     point: tuple[float, float],
     openings: Iterable[Opening],
     panels: Iterable[Panel],
     sheeter: _Sheeter,
-) -> Sheets:
+) -> _Kind:
     """What is there at a point of a face: the innermost opening, and the panels on it."""
     host, stack = name, base
     for opening in openings:
@@ -137,7 +142,7 @@ def _stack_at(
         if panel.make_up is not None:
             stack = sheeter.sheets(panel.make_up)
         stack = (*sheeter.sheets(panel.inside), *stack, *sheeter.sheets(panel.outside))
-    return stack
+    return stack, "" if host == name else host
 
 
 def sheets_of(make_up: MakeUp, defined: Sequence[Material]) -> Sheets:

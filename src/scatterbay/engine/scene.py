@@ -73,6 +73,8 @@ class Scene:
     stuck: tuple[StuckSource, ...] = ()
     face_numbers: Mapping[str, int] = field(default_factory=dict)
     """Number of each side, of the ceiling, the floor and each screen, by name."""
+    of_opening: Mapping[str, int] = field(default_factory=dict)
+    """Mask of the kinds of make-up of each opening, by name."""
 
 
 def build_scene(scenario: Scenario) -> Scene:
@@ -112,6 +114,7 @@ def build_scene(scenario: Scenario) -> Scene:
         tuple(_timed(load, beams) for load in scenario.workloads),
         *_states(scenario, outputs, defined),
         {name: number for number, name in enumerate(fabric.names)},
+        fabric.of_opening,
     )
 
 
