@@ -18,7 +18,8 @@ ALLOWED = {
     "scenario": {"units", "tables", "geometry"},
     "engine": {"scenario", "barriers", "physics", "geometry", "tables"},
     "exposure": {"units", "engine", "scenario", "physics", "tables"},
-    "report": {"exposure", "engine", "scenario", "physics", "units"},
+    "advice": {"exposure", "engine", "scenario", "geometry", "tables", "physics", "barriers", "units"},
+    "report": {"advice", "exposure", "engine", "scenario", "physics", "units"},
 }
 
 

@@ -11,6 +11,7 @@ from scatterbay.scenario.parts import MakeUp, Scenario
 if TYPE_CHECKING:
     import pandas as pd
 
+    from scatterbay.advice.whole import Advice, SurfaceAdvice
     from scatterbay.barriers.makeup import Sheets
     from scatterbay.engine.single import PatchGeometry
     from scatterbay.report.barrier import BarrierReport, Published
@@ -31,9 +32,8 @@ def assess(scenario: Scenario | str | Path) -> Assessment:
     from scatterbay.engine.contributions import contributions
     from scatterbay.engine.scene import build_scene
     from scatterbay.exposure.assess import assess as judge
-    from scatterbay.scenario import load
 
-    checked = scenario if isinstance(scenario, Scenario) else load(scenario)
+    checked = _checked(scenario)
     scene = build_scene(checked)
     return judge(checked, scene, contributions(scene))
 
@@ -101,6 +101,95 @@ def source(name: str) -> SourceReport:
     spectrum = spectrum_of(named)
     layers = narrow_value_layers(spectrum, [material(one) for one in LAYERS])
     return SourceReport(named.text, spectrum, layers, _source_facts(named))
+
+
+def wall(
+    scenario: Scenario | str | Path,
+    side: str,
+    materials: str = "lead, steel, concrete",
+    gap: str = "0.3 m",
+    people: str = "",
+    occupancy: str = "1",
+    limit: str = "1",
+) -> tuple[SurfaceAdvice, float]:
+    """Scan the protected side of a surface, with remedies where a goal is missed; and the limit as a number.
+
+    Parameters
+    ----------
+    side : name of a side, an opening or a screen, ``ceiling`` or ``floor``.
+    materials : to add, with commas between.
+    gap : distance of the points from the outer face.
+    people, occupancy : a group to judge by, instead of the places behind the surface.
+    limit : share of each goal that the upper end of a figure's band may reach.
+
+    Raises
+    ------
+    UsageError : a name or a text that cannot be used, or nobody behind the surface.
+    """
+    from scatterbay.advice.scan import Standing, scan, standings_behind
+    from scatterbay.advice.surfaces import surface_of
+    from scatterbay.advice.whole import surface_advice
+    from scatterbay.engine.scene import build_scene
+    from scatterbay.errors import UsageError
+    from scatterbay.units import nearest
+
+    checked = _checked(scenario)
+    surface, names, share = surface_of(checked, side), _materials(materials), _share(limit, "limit")
+    scene = build_scene(checked)
+    if people:
+        groups = [group.name for group in checked.people]
+        if people not in groups:
+            near = nearest(people, groups)
+            hint = f"did you mean '{near}'? " if near else ""
+            raise UsageError(f"there is no group '{people}'; {hint}there are: {', '.join(groups)}")
+        standings: tuple[Standing, ...] = (
+            Standing(people, _share(occupancy, "occupancy"), people, (0.0, 0.0, 0.0)),
+        )
+    else:
+        standings = standings_behind(checked, scene, surface)
+    found = scan(checked, surface, standings, _gap(gap), scene=scene)
+    return surface_advice(checked, found, names, share), share
+
+
+def advise(
+    scenario: Scenario | str | Path, materials: str = "lead, steel, concrete", limit: str = "1"
+) -> Advice:
+    """Scan every surface that protects someone, and what to add where; parameters and errors as for ``wall``."""
+    from scatterbay.advice.whole import advise as all_surfaces
+
+    return all_surfaces(_checked(scenario), _materials(materials), limit=_share(limit, "limit"))
+
+
+def _checked(scenario: Scenario | str | Path) -> Scenario:
+    from scatterbay.scenario import load
+
+    return scenario if isinstance(scenario, Scenario) else load(scenario)
+
+
+def _materials(text: str) -> list[str]:
+    from scatterbay.scenario.make_ups import check_material
+
+    return [check_material(" ".join(name.split())) for name in text.split(",") if name.strip()]
+
+
+def _share(text: str, what: str) -> float:
+    from scatterbay.errors import UsageError
+    from scatterbay.units import read_number
+
+    value = read_number(text, f"{what}: above 0 and at most 1, as 1, 1/4, 0.25 or 25 %")
+    if not 0.0 < value <= 1.0:
+        raise UsageError(f"{what} {text} is not above 0 and at most 1")
+    return value
+
+
+def _gap(text: str) -> float:
+    from scatterbay.errors import UsageError
+    from scatterbay.units import read
+
+    value = read(text, "length").value
+    if not 0.05 <= value <= 10.0:
+        raise UsageError(f"a gap of {text} is not between 50 mm and 10 m")
+    return value
 
 
 def table(result: Assessment | BarrierReport | SourceReport) -> pd.DataFrame:

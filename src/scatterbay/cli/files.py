@@ -9,6 +9,19 @@ from pathlib import Path
 from scatterbay.errors import UsageError
 
 
+def check_free(target: Path, force: bool) -> None:
+    """Refuse a file that is there already, or a folder that is not, before any work is done for it.
+
+    Raises
+    ------
+    UsageError : the file exists and ``force`` is off, or its folder does not exist.
+    """
+    if target.exists() and not force:
+        raise UsageError(f"{target} exists already; give another name, or --force to overwrite it")
+    if not target.parent.is_dir():
+        raise UsageError(f"{target} cannot be written: there is no folder {target.parent}")
+
+
 def write_whole(target: Path, text: str, force: bool) -> None:
     """Write text to a file by way of a temporary one beside it.
 
@@ -16,8 +29,7 @@ def write_whole(target: Path, text: str, force: bool) -> None:
     ------
     UsageError : the file exists and ``force`` is off, or it cannot be written.
     """
-    if target.exists() and not force:
-        raise UsageError(f"{target} exists already; give another name, or --force to overwrite it")
+    check_free(target, force)
     name = ""
     try:
         handle, name = tempfile.mkstemp(dir=target.parent, prefix=f".{target.name}-")
