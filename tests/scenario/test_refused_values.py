@@ -91,7 +91,7 @@ NAMES = [
     Edit("aim: pipe", "aim: §pip", ("no body, place or direction 'pip'", "did you mean 'pipe'")),
     Edit("people: apprentices", "people: §aprentices", ("no group of people", "did you mean 'apprentices'")),
     Edit("beyond: north", "beyond: §nort", ("no side", "did you mean 'north'")),
-    Edit("in: west", "in: §wets", ("no side 'wets'", "did you mean 'west'")),
+    Edit("in: west", "in: §wets", ("no side, screen or opening 'wets'", "did you mean 'west'")),
     Edit("[down shot, weld shot]", "[down shot, §wled shot]", ("no beam", "did you mean 'weld shot'")),
     Edit("[down shot, weld shot]", "§[down shot]", ("two or more",)),
     Edit("[down shot, weld shot]", "§[down shot, down shot]", ("two or more",)),

@@ -90,8 +90,8 @@ def show_scan(one: SurfaceAdvice, screen: Screen, limit: float) -> None:
     who = sorted({(s.place, s.people, s.occupancy) for s in found.standings})
     said = "; ".join(f"{place} ({people}, occupancy {significant(share, 3)})" for place, people, share in who)
     screen.paragraph(
-        f"points at most {max(found.grid.spacing):.2f} m apart, {found.gap:g} m beyond the outer face (or at the heights "
-        f"usual above and below); each judged as the nearest of: {said}",
+        f"points at most {max(found.grid.spacing):.2f} m apart, {found.gap:g} m beyond the outer face (or at the "
+        f"usual heights above and below); each judged as the nearest of: {said}",
         indent="    ", first="  ",
     )  # fmt: skip
 

@@ -125,14 +125,14 @@ def _side_and_along(
     """The side a place is beyond, and how far along; beyond an opening it is the opening's middle."""
     path = ("places", name)
     sides = {side.name: side for side in room.sides}
-    openings = {opening.name: opening for opening in room.openings if opening.host in sides}
+    openings = {opening.name: opening for opening in room.openings if opening.on_face in sides}
     beyond = str(entry.beyond)
     if beyond in openings:
         if entry.along is not None:
             message = f"'along' is not needed: the place is behind the middle of '{beyond}'"
             findings.wrong((*path, "along"), message, "take it out, or name the side")
         opening = openings[beyond]
-        return sides[opening.host], 0.5 * (opening.low[0] + opening.high[0])
+        return sides[opening.on_face], 0.5 * (opening.low[0] + opening.high[0])
     if beyond not in sides:
         findings.unknown((*path, "beyond"), "side, or opening in a side,", beyond, [*sides, *openings])
         return None

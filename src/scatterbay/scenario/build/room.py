@@ -6,6 +6,7 @@ from scatterbay.scenario import parts
 from scatterbay.scenario.build.findings import Findings, whole
 from scatterbay.scenario.build.openings import build_openings, build_screens
 from scatterbay.scenario.build.outline import build_sides, sound_corners
+from scatterbay.scenario.build.panels import build_panels
 from scatterbay.scenario.model import room as written
 from scatterbay.scenario.model.base import Broken
 
@@ -18,8 +19,9 @@ def build_room(room: written.Room, findings: Findings) -> parts.Room | None:
     corners = sound_corners(room, findings)
     sides = build_sides(room, corners, findings)
     _check_names(room, findings)
-    openings = build_openings(room, sides, corners, findings)
     screens = build_screens(room, findings)
+    openings = build_openings(room, sides, screens, corners, findings)
+    panels = build_panels(room, sides, screens, openings, corners, findings)
     height, ceiling, floor = whole(room.height), whole(room.ceiling), whole(room.floor)
     above, below = whole(room.storey_above), whole(room.storey_below)
     if corners is None or sides is None or height is None or ceiling is None or floor is None:
@@ -46,13 +48,14 @@ def build_room(room: written.Room, findings: Findings) -> parts.Room | None:
         below.value if below else None,
         openings,
         screens,
+        panels,
     )
 
 
 def _check_names(room: written.Room, findings: Findings) -> None:
     """Sides, openings and screens are called by name in one breath, so the names must differ."""
     seen: dict[str, str] = dict.fromkeys(written.FLAT, "part of every room")
-    for section in ("sides", "openings", "screens"):
+    for section in ("sides", "openings", "screens", "panels"):
         for name in getattr(room, section) if not isinstance(getattr(room, section), Broken) else ():
             if name in seen:
                 findings.wrong(

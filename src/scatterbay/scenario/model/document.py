@@ -51,4 +51,4 @@ class Document(Form):
 NAMED = ("materials", "bodies", "sources", "beams", "workload", "techniques", "people", "places")
 """Sections whose entries are named by the author."""
 
-NAMED_IN_ROOM = ("sides", "openings", "screens")
+NAMED_IN_ROOM = ("sides", "openings", "screens", "panels")

@@ -41,6 +41,8 @@ def form_at(path: Path, value: Data) -> type[Form] | None:
         return sources.XrayTube if "x-ray tube" in found else sources.SealedSource
     if path[:2] == ("room", "screens"):
         return room.Screen
+    if path[:2] == ("room", "panels"):
+        return room.FlatPanel if found.get("on") in room.FLAT else room.SidePanel
     if path[:2] == ("room", "openings"):
         return room.FlatOpening if found.get("in") in room.FLAT else room.SideOpening
     return _SECTIONS.get(section)

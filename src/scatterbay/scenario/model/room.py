@@ -21,10 +21,12 @@ FLAT = ("ceiling", "floor")
 
 
 class SideOpening(Form):
-    """A door, window or gap in a side."""
+    """A door, window or gap in a side, a screen or another opening."""
 
-    in_: Name = Field(description="The side it is in")
-    from_: LengthFromZero = Field(description="Distance from the side's first corner to the near edge")
+    in_: Name = Field(description="The side, screen or opening it is in")
+    from_: LengthFromZero = Field(
+        description="Distance to the near edge: from the first corner of the side or screen, or the opening's near edge"
+    )
     width: Length = Field(description="Width along the side")
     height: Length = Field(description="Height of the opening itself")
     sill: LengthFromZero | None = Field(
@@ -49,6 +51,50 @@ def _which_opening(value: Any) -> str:
 Opening = Annotated[
     Annotated[SideOpening, Tag("(side)")] | Annotated[FlatOpening, Tag("(flat)")],
     Discriminator(_which_opening),
+]
+
+
+class SidePanel(Form):
+    """A part of a side, a screen or an opening that holds more or less than the rest of it."""
+
+    on: Name = Field(description="The side, screen or opening it is part of")
+    from_: LengthFromZero | None = Field(
+        None, description="Near edge, measured as for an opening; 0 if left out"
+    )
+    width: Length | None = Field(None, description="Width; to the far end of what it is on if left out")
+    to: Length | None = Field(None, description="Far edge, instead of the width")
+    bottom: LengthFromZero | None = Field(
+        None, description="Height of the lower edge above the floor; that of what it is on if left out"
+    )
+    height: Length | None = Field(
+        None, description="Its own height; up to the top of what it is on if left out"
+    )
+    top: Length | None = Field(
+        None, description="Height of the upper edge above the floor, instead of the height"
+    )
+    make_up: MakeUp | None = Field(None, description="What is there instead, from the inside to the outside")
+    add_inside: MakeUp | None = Field(None, description="Layers added on the inner face")
+    add_outside: MakeUp | None = Field(None, description="Layers added on the outer face")
+
+
+class FlatPanel(Form):
+    """A part of the ceiling or the floor that holds more or less than the rest of it."""
+
+    on: Literal["ceiling", "floor"] = Field(description="Where it is")
+    from_: PlanPosition | None = Field(None, description="One corner on plan [x, y]; all of it if left out")
+    to: PlanPosition | None = Field(None, description="The opposite corner [x, y]")
+    make_up: MakeUp | None = Field(None, description="What is there instead, from the inside to the outside")
+    add_inside: MakeUp | None = Field(None, description="Layers added on the inner face")
+    add_outside: MakeUp | None = Field(None, description="Layers added on the outer face")
+
+
+def _which_panel(value: Any) -> str:
+    return "(flat)" if isinstance(value, dict) and value.get("on") in FLAT else "(side)"
+
+
+Panel = Annotated[
+    Annotated[SidePanel, Tag("(side)")] | Annotated[FlatPanel, Tag("(flat)")],
+    Discriminator(_which_panel),
 ]
 
 
@@ -83,3 +129,6 @@ class Room(Form):
         {}, description="Doors, windows, hatches, gaps, by name"
     )
     screens: Maybe[dict[str, Maybe[Screen]]] = Field({}, description="Free-standing barriers, by name")
+    panels: Maybe[dict[str, Maybe[Panel]]] = Field(
+        {}, description="Linings, patches, sockets, chases, joints: parts that hold more or less, by name"
+    )
