@@ -96,10 +96,13 @@ def test_never_together_takes_every_technique_of_a_beam() -> None:
 
 
 def test_patients_by_their_charge() -> None:
-    """120 patients at 1.9 mA min each: 228 mA min, at 250 mA 54.72 s; 8 in the worst hour."""
-    load = next(w for w in loads(TEXT, "list").workloads if w.beam == "table")
-    assert load.seconds_per_week == pytest.approx(228.0 / 250.0 * 60.0)
-    assert load.seconds_in_worst_hour == pytest.approx(8 * 1.9 / 250.0 * 60.0)
+    """120 patients at 1.9 mA min each: 228 mA min a week; 8 in the worst hour; 1.9 mA on average over a minute."""
+    scenario = loads(TEXT, "list")
+    load = next(w for w in scenario.workloads if w.beam == "table")
+    current = tube(scenario, "tube: table").current.value
+    assert current == pytest.approx(1.9e-3)
+    assert load.seconds_per_week * current == pytest.approx(228e-3 * 60.0)
+    assert load.seconds_in_worst_hour * current == pytest.approx(8 * 1.9e-3 * 60.0)
 
 
 def test_charge_spread_over_voltages() -> None:

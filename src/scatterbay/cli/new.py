@@ -7,9 +7,18 @@ from typing import Annotated
 
 import typer
 
+STARTS = {"medical": "two-tube-room", "projector": "projector-job"}
+"""Shorter names for what most people start from."""
+
 
 def command(
-    kind: Annotated[str, typer.Argument(help="weld-bay, casting-cell, pipe-shop or radiography-room.")],
+    kind: Annotated[
+        str,
+        typer.Argument(
+            help="weld-bay, casting-cell, pipe-shop, radiography-room, two-tube-room (or medical), "
+            "projector-job (or projector)."
+        ),
+    ],
     output: Annotated[
         Path | None, typer.Option("-o", "--output", help="File to write; KIND.yaml here if left out.")
     ] = None,
@@ -20,8 +29,9 @@ def command(
     Example: scatterbay new weld-bay -o my-bay.yaml
     """
     from scatterbay.cli.files import write_whole
-    from scatterbay.errors import UsageError
+    from scatterbay.errors import OutOfRangeError, UsageError
     from scatterbay.resources import folder
+    from scatterbay.scenario.purposes import not_validated
     from scatterbay.units import nearest
 
     kinds = sorted(
@@ -29,6 +39,10 @@ def command(
         for entry in folder("scenarios").iterdir()
         if entry.name.endswith(".yaml")
     )
+    kind = STARTS.get(kind, kind)
+    refused = not_validated(kind) or not_validated(kind.upper())
+    if refused:
+        raise OutOfRangeError(f"rooms for {refused} are refused: nothing here was validated for them")
     if kind not in kinds:
         near = nearest(kind, kinds)
         hint = f"did you mean '{near}'? " if near else ""

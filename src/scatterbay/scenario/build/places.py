@@ -13,6 +13,8 @@ from scatterbay.scenario.build.outline import outward
 from scatterbay.scenario.build.room import UNDER_THE_HEAD
 from scatterbay.scenario.model import use as written
 from scatterbay.scenario.model.document import Document
+from scatterbay.scenario.rules import occupancy_suggestion
+from scatterbay.units import significant
 
 if TYPE_CHECKING:
     from scatterbay.geometry.solids import Solid
@@ -35,6 +37,7 @@ def build_places(document: Document, room: parts.Room | None, findings: Findings
     broken = set(names_in(written_room.openings) or () if written_room else ())
     broken -= {opening.name for opening in room.openings} if room else set()
     groups = names_in(document.people)
+    areas = {name: group.area for name, group in usable(document.people).items()}
     found = []
     for name, entry in usable(document.places).items():
         path = ("places", name)
@@ -46,8 +49,22 @@ def build_places(document: Document, room: parts.Room | None, findings: Findings
         if spot is not None:
             at, how = spot
             occupancy = 1.0 if entry.occupancy is None else entry.occupancy
-            found.append(parts.Place(name, at, entry.people, occupancy, how))
+            _suggest(name, entry, occupancy, findings)
+            area = entry.area or areas.get(entry.people) or ""
+            found.append(parts.Place(name, at, entry.people, occupancy, how, area, entry.space or ""))
     return tuple(found)
+
+
+def _suggest(name: str, entry: written.Place, occupancy: float, findings: Findings) -> None:
+    """Say which occupancy factor is suggested for a kind of space; it is never applied."""
+    if entry.space is None:
+        return
+    suggested = occupancy_suggestion(entry.space)
+    text = (
+        f"'{name}' counts {significant(occupancy, 3)}; for '{suggested.space}' {suggested.factor} is suggested "
+        f"({suggested.source}), which is not applied"
+    )
+    findings.assume("occupancy", text)
 
 
 def _spot(

@@ -14,11 +14,15 @@ from scatterbay.scenario.build.places import build_places, check_places
 from scatterbay.scenario.build.room import build_room
 from scatterbay.scenario.build.sources import build_sources
 from scatterbay.scenario.build.states import check_states
+from scatterbay.scenario.build.stock import check_stock, note_least
 from scatterbay.scenario.build.techniques import expand
 from scatterbay.scenario.build.workload import build_workloads
 from scatterbay.scenario.model.document import NAMED, NAMED_IN_ROOM, Document
+from scatterbay.scenario.purposes import not_validated
 
 LONGEST_NAME = 60
+MOST_BREADTH = 0.5
+"""[m]"""
 _NEEDED = ("sources", "beams", "people", "places")
 
 
@@ -44,6 +48,14 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
     expanded = expand(document, sources, beams, workloads, findings)
     together = _never_together(document, expanded.named, findings)
     options = _options(document, findings)
+    check_stock(document, findings)
+    spoken_of = not_validated(whole(document.title) or "")
+    if spoken_of:
+        findings.assume(
+            "purpose", f"The title speaks of {spoken_of}: nothing here was validated for such rooms"
+        )
+    if room is not None:
+        note_least(room, findings)
     if not bodies:
         findings.assume("bodies", "No bodies are given: nothing in the room scatters the beam")
     if room is None:
@@ -65,6 +77,8 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
         materials,
         options,
         findings.assumptions,
+        whole(document.purpose) or "",
+        whole(document.notes) or (),
     )
 
 
@@ -121,4 +135,11 @@ def _options(document: Document, findings: Findings) -> parts.Options:
     if options is None:
         return parts.Options()
     seed = parts.Options.seed if options.seed is None else options.seed
-    return parts.Options(options.primary_by == "plane", seed)
+    breadth = parts.Options.breadth if options.breadth is None else options.breadth.value
+    if options.breadth is not None and breadth > MOST_BREADTH:
+        message = f"'{options.breadth.text}' is more than {MOST_BREADTH:g} m"
+        findings.wrong(("options", "breadth"), message, "a hand's breadth is 100 mm")
+    if breadth < parts.Options.breadth:
+        text = f"Rays are taken at their worst within {1e3 * breadth:.0f} mm only, less than a hand's breadth of 100 mm"
+        findings.assume("hand's breadth", text)
+    return parts.Options(options.primary_by == "plane", seed, breadth)

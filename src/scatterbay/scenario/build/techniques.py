@@ -7,12 +7,11 @@ from dataclasses import dataclass, replace
 
 from scatterbay.scenario import parts
 from scatterbay.scenario.build.findings import Findings, names_in, usable
-from scatterbay.scenario.build.workload import WEEKS, filled, possible
+from scatterbay.scenario.build.workload import MINUTE, WEEKS, filled, possible
 from scatterbay.scenario.model import use as written
 from scatterbay.scenario.model.document import Document
 from scatterbay.units import Quantity, format_quantity
 
-MINUTE = 60.0
 _Made = tuple[parts.Source, parts.Beam, parts.Workload]
 
 
@@ -36,7 +35,7 @@ def expand(
     """Write out technique lists, and charge that is spread over several voltages."""
     by_name = {source.name: source for source in sources}
     lists = _lists(document, {beam.name: beam for beam in beams}, by_name, findings)
-    spread = {name: entry.voltages for name, entry in usable(document.workload).items() if entry.voltages}
+    patients = {name: entry for name, entry in usable(document.workload).items() if entry.per_patient}
     made_sources: dict[str, parts.Source] = {}
     made_beams, made_loads, named = [], [], {}
     loads = {load.beam: load for load in workloads}
@@ -51,7 +50,7 @@ def expand(
             )
             found += [one] if one else []
         if not found and beam.name in loads:
-            found = _plain(beam, source, loads[beam.name], spread.get(beam.name), findings)
+            found = _plain(beam, source, loads[beam.name], patients.get(beam.name), findings)
         for setting, made, load in found:
             made_sources[setting.name] = setting
             made_beams.append(made)
@@ -66,12 +65,12 @@ def _plain(
     beam: parts.Beam,
     source: parts.Source | None,
     load: parts.Workload,
-    shares: tuple[tuple[Quantity, float], ...] | None,
+    entry: written.Workload | None,
     findings: Findings,
 ) -> list[_Made]:
-    """A beam without techniques, its tube's charge spread over voltages where shares are given."""
-    if shares and isinstance(source, parts.XrayTube):
-        setting = _spread(beam, source, shares, findings)
+    """A beam without techniques; with patients, a setting whose charge is theirs."""
+    if entry is not None and entry.per_patient is not None and isinstance(source, parts.XrayTube):
+        setting = _patients(beam, source, entry.per_patient, entry.voltages or (), findings)
         return [(setting, replace(beam, source=setting.name), load)] if setting else []
     return [(source, beam, load)] if source else []
 
@@ -139,11 +138,10 @@ def _technique(
     if entry.weeks is None:
         findings.assume("weeks", f"In use {WEEKS:g} weeks a year", name)
     charge = entry.charge.value
-    mean = charge * per_minute / MINUTE
     setting = _setting(tube, f"{tube.name}: {name}", entry.voltage, findings)
     setting = replace(
         setting,
-        current=Quantity(mean, 0.0, "current", f"{format_quantity(mean, 'current')} averaged over a minute"),
+        current=_over_a_minute(charge * per_minute),
         per_exposure=charge,
         output=entry.output or setting.output,
         output_at=None if entry.output else setting.output_at,
@@ -171,18 +169,29 @@ def _count(path: tuple[str, ...], given: Quantity | None, findings: Findings) ->
     return given.value
 
 
-def _spread(
+def _patients(
     beam: parts.Beam,
     tube: parts.XrayTube,
+    charge: Quantity,
     shares: tuple[tuple[Quantity, float], ...],
     findings: Findings,
 ) -> parts.XrayTube | None:
-    """The tube with its charge spread over voltages."""
+    """The tube with the charge of one patient a minute, spread over voltages where shares are given."""
     path = ("workload", beam.name, "voltages")
     if not all(_may_run(path, voltage, tube, findings) for voltage, _ in shares):
         return None
-    highest = max((voltage for voltage, _ in shares), key=lambda v: v.value)
-    return replace(_setting(tube, f"{tube.name}: {beam.name}", highest, findings), voltages=shares)
+    highest = max((voltage for voltage, _ in shares), key=lambda v: v.value, default=tube.voltage)
+    findings.assume(
+        "short exposures", "At most one patient a minute; rates are averages over a minute", beam.name
+    )
+    setting = _setting(tube, f"{tube.name}: {beam.name}", highest, findings)
+    return replace(setting, voltages=shares, current=_over_a_minute(charge.value))
+
+
+def _over_a_minute(charge: float) -> Quantity:
+    """The mean current of a charge [C] within a minute."""
+    mean = charge / MINUTE
+    return Quantity(mean, 0.0, "current", f"{format_quantity(mean, 'current')} averaged over a minute")
 
 
 def _may_run(path: tuple[str, ...], voltage: Quantity, tube: parts.XrayTube, findings: Findings) -> bool:

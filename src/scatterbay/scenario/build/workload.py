@@ -11,6 +11,8 @@ from scatterbay.scenario.model import use as written
 from scatterbay.scenario.model.document import Document
 from scatterbay.units import WEEK_SECONDS, Quantity, format_quantity, nearest
 
+MINUTE = 60.0
+"""[s] A patient's charge is spread over one: rates are averages over a minute at most."""
 HOUR = 3600.0
 EIGHT_HOURS = 8.0 * HOUR
 WEEKS = 52.0
@@ -177,7 +179,7 @@ def _checked(
         if entry.per_patient is None:
             findings.wrong(path, "'per patient' is missing", "add 'per patient: 1.9 mA min'", on_key=True)
             return None
-        return Terms(way, ("patients",), entry.per_patient.value / current)
+        return Terms(way, ("patients",), MINUTE)
     if entry.beam_on is not None and entry.beam_on.kind == "charge per week" and not current:
         message = f"'{entry.beam_on.text}' cannot be turned into a time: the source has no tube current"
         findings.wrong((*path, way), message, "give the time the beam is on")

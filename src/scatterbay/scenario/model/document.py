@@ -8,7 +8,16 @@ from pydantic import Field
 
 from scatterbay.scenario.model.base import Form, Maybe
 from scatterbay.scenario.model.bodies import Body
-from scatterbay.scenario.model.kinds import Density, Formula, MassFractions, NameLists, Notes, Text
+from scatterbay.scenario.model.kinds import (
+    Density,
+    Formula,
+    MakeUp,
+    MassFractions,
+    NameLists,
+    Notes,
+    Purpose,
+    Text,
+)
 from scatterbay.scenario.model.room import Room
 from scatterbay.scenario.model.sources import Source
 from scatterbay.scenario.model.use import Beam, Options, People, Place, Technique, Workload
@@ -28,9 +37,14 @@ class Document(Form):
     format: Maybe[Literal[1]] = Field(description="Version of the file format")
     title: Maybe[Text] = Field(description="What this is")
     drawing: Maybe[Text | None] = Field(None, description="The drawing it was taken from, with its revision")
+    purpose: Maybe[Purpose | None] = Field(None, description="What the room is for")
     notes: Maybe[Notes | None] = Field(None, description="Remarks")
     room: Maybe[Room] = Field(description="The room")
     materials: Maybe[dict[str, Maybe[Material]]] = Field({}, description="Materials of your own, by name")
+    stock: Maybe[dict[str, Maybe[MakeUp]]] = Field(
+        {},
+        description="Sheets and boards of your own, by the name make-ups use: layers, counted at their least",
+    )
     bodies: Maybe[dict[str, Maybe[Body]]] = Field({}, description="Things that scatter, by name")
     sources: Maybe[dict[str, Maybe[Source]]] = Field(description="What radiates, by name")
     beams: Maybe[dict[str, Maybe[Beam]]] = Field(description="Where sources stand and point, by name")
@@ -48,7 +62,7 @@ class Document(Form):
     options: Maybe[Options | None] = Field(None, description="Choices about the calculation")
 
 
-NAMED = ("materials", "bodies", "sources", "beams", "workload", "techniques", "people", "places")
+NAMED = ("materials", "stock", "bodies", "sources", "beams", "workload", "techniques", "people", "places")
 """Sections whose entries are named by the author."""
 
 NAMED_IN_ROOM = ("sides", "openings", "screens", "panels")

@@ -15,6 +15,7 @@ from scatterbay.scenario.model import readers, schemas, values
 from scatterbay.scenario.model.base import FromText
 from scatterbay.scenario.model.readers import GROUND
 from scatterbay.scenario.model.values import Point2, Point3
+from scatterbay.scenario.purposes import PURPOSES, purpose, space
 from scatterbay.units import Quantity
 
 
@@ -43,6 +44,8 @@ _GOAL = schemas.text(
     "6 mSv/year",
 )
 _GOALS = {"anyOf": [{"type": "array", "items": _GOAL, "minItems": 1}, _GOAL]}
+_RULE = schemas.text("A rule set and an entry of it", "NCRP 147: controlled area")
+_RULES = {"anyOf": [{"type": "array", "items": _RULE, "minItems": 1}, _RULE]}
 _FIELD = schemas.text(
     "The shape of the beam", "200 mm x 300 mm at 700 mm", "cone 40 deg", "panoramic 40 deg", "all round"
 )
@@ -74,6 +77,18 @@ def _rate(example: str, *more: str) -> schemas.Schema:
 Text: TypeAlias = Annotated[str, FromText(readers.name, schemas.text("A piece of text"))]
 Notes: TypeAlias = Annotated[
     tuple[str, ...], FromText(readers.notes, {"anyOf": [_NOTES, {"type": "array", "items": _NOTES}]})
+]
+Purpose: TypeAlias = Annotated[
+    str,
+    FromText(
+        values.in_text(purpose, "radiography"), {"enum": list(PURPOSES), "description": "What a room is for"}
+    ),
+]
+RuleNames: TypeAlias = Annotated[
+    tuple[tuple[str, tuple[parts.Goal, ...]], ...], FromText(readers.rule_goals, _RULES)
+]
+Space: TypeAlias = Annotated[
+    str, FromText(values.in_text(space, "corridor"), schemas.text("A kind of space", "corridor", "office"))
 ]
 Name: TypeAlias = Annotated[str, FromText(readers.name, schemas.text("A name given in this file"))]
 MaterialName: TypeAlias = Annotated[

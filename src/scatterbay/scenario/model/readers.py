@@ -17,6 +17,7 @@ from scatterbay.scenario.known import (
 )
 from scatterbay.scenario.model.base import Names, each
 from scatterbay.scenario.model.values import Point3, Reader, factor, point, written
+from scatterbay.scenario.rules import goals_from
 from scatterbay.scenario.yaml_tree import Data
 from scatterbay.units import Quantity, TextError, nearest, read
 
@@ -90,6 +91,23 @@ def shares(value: Data, names: Names) -> tuple[tuple[Quantity, float], ...]:
     if abs(total - 1.0) > 0.005:
         raise TextError(f"the shares add up to {total:.4g}", "they must add up to 1 within 0.005")
     return tuple((voltage, share / total) for voltage, share in zip(volts, found, strict=True))
+
+
+def rule_goals(value: Data, names: Names) -> tuple[tuple[str, tuple[parts.Goal, ...]], ...]:
+    """One entry of a rule set, or a list of them, each with its goals."""
+    if not isinstance(value, tuple):
+        return (_rule(value),)
+    if not value:
+        raise TextError("no rule is named", "write for example 'NCRP 147: controlled area'")
+    return tuple(each(enumerate(value), _rule))
+
+
+def _rule(value: Data) -> tuple[str, tuple[parts.Goal, ...]]:
+    if isinstance(value, Mapping) and len(value) == 1:
+        ((rule_set, entry),) = value.items()
+        raise TextError("a colon makes a mapping of this", f'put it in quotes: "{rule_set}: {entry}"')
+    text = written(value, "'NCRP 147: controlled area'")
+    return text, goals_from(text)
 
 
 def _tube_voltage(text: str) -> Quantity:

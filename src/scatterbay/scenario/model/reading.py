@@ -8,6 +8,7 @@ from typing import Any
 from pydantic import ValidationError
 
 from scatterbay.errors import Problem
+from scatterbay.scenario.known import Known
 from scatterbay.scenario.model.base import BROKEN
 from scatterbay.scenario.model.document import NAMED, NAMED_IN_ROOM, Document
 from scatterbay.scenario.model.messages import place, problems_of
@@ -23,8 +24,7 @@ def read_document(tree: Tree) -> tuple[Document | None, list[Problem]]:
         hint = "a scenario is lines of 'name: value'; `scatterbay new` writes one to start from"
         return None, [place(tree, (), TextError("this is not a scenario", hint))]
     problems = [_empty(tree, path) for path in _nothings(tree.data, ())]
-    defined = tree.data.get("materials")
-    names = tuple(defined) if isinstance(defined, Mapping) else ()
+    names = _defined(tree.data)
     for _ in range(_ROUNDS):
         try:
             return Document.model_validate(tree.data, context=names), problems
@@ -33,6 +33,17 @@ def read_document(tree: Tree) -> tuple[Document | None, list[Problem]]:
                 problems += [problem] if problem else []
                 _set_aside(tree.data, path, kind)
     raise AssertionError("a scenario did not settle although its broken entries were set aside")
+
+
+def _defined(data: Mapping[str, Data]) -> Known:
+    """The materials and the stock items that the scenario defines."""
+    materials, stock = data.get("materials"), data.get("stock")
+    return Known(
+        tuple(materials) if isinstance(materials, Mapping) else (),
+        {name: text for name, text in stock.items() if isinstance(text, str)}
+        if isinstance(stock, Mapping)
+        else {},
+    )
 
 
 def _nothings(value: Data, path: Path) -> list[Path]:

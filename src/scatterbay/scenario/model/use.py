@@ -19,17 +19,22 @@ from scatterbay.scenario.model.kinds import (
     Factor,
     Goals,
     Length,
+    LengthFromZero,
     Name,
     Output,
     PlanPosition,
     Position,
+    RuleNames,
     Shares,
+    Space,
     Text,
     Time,
     TimePerWeek,
     Voltage,
     Weeks,
 )
+
+Area = Literal["controlled", "supervised", "public"]
 
 
 class Beam(Form):
@@ -91,8 +96,9 @@ class Technique(Form):
 class People(Form):
     """A group of people and what they may receive."""
 
-    area: Literal["controlled", "supervised", "public"] = Field(description="The kind of area they are in")
-    goals: Goals = Field(description="Design goals, each with its time base")
+    area: Area | None = Field(None, description="The kind of area they are in, where a place does not say")
+    goals: Goals | None = Field(None, description="Design goals, each with its time base")
+    rules: RuleNames | None = Field(None, description="Entries of shipped rule sets to take goals from")
 
 
 class Place(Form):
@@ -110,6 +116,10 @@ class Place(Form):
         None, description="With beyond: distance from the outer face, instead of 0.3 m"
     )
     people: Name = Field(description="Name of the group")
+    area: Area | None = Field(None, description="The kind of area it is; the group's if left out")
+    space: Space | None = Field(
+        None, description="Kind of space, to be told the occupancy factor suggested for it (never applied)"
+    )
     occupancy: Factor | None = Field(None, description="Share of the time someone is there; 1 if left out")
 
 
@@ -118,5 +128,9 @@ class Options(Form):
 
     primary_by: Literal["lit patch", "plane"] | None = Field(
         None, description="Judge the primary beam on the patch it lights, or on a wall lit everywhere"
+    )
+    breadth: LengthFromZero | None = Field(
+        None,
+        description="How far around it a ray takes the worst of a barrier or a beam's edge; 100 mm if left out",
     )
     seed: int | None = Field(None, ge=0, le=2**32 - 1, description="Seed of the sampling; 1 if left out")
