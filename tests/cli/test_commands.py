@@ -19,7 +19,9 @@ def test_version() -> None:
     assert done.stdout == f"scatterbay {scatterbay.__version__}\n"
 
 
-@pytest.mark.parametrize("command", ["assess", "barrier", "source", "lists", "new", "schema"])
+@pytest.mark.parametrize(
+    "command", ["assess", "wall", "advise", "barrier", "source", "lists", "new", "schema"]
+)
 def test_every_command_has_help_with_an_example(command: str) -> None:
     done = run(command, "--help")
     assert done.returncode == 0
@@ -27,7 +29,15 @@ def test_every_command_has_help_with_an_example(command: str) -> None:
 
 
 @pytest.mark.parametrize(
-    ("name", "code"), [("weld-bay", 0), ("casting-cell", 0), ("pipe-shop", 1), ("radiography-room", 1)]
+    ("name", "code"),
+    [
+        ("weld-bay", 0),
+        ("casting-cell", 0),
+        ("pipe-shop", 1),
+        ("radiography-room", 1),
+        ("projector-job", 0),
+        ("two-tube-room", 1),
+    ],
 )
 def test_shipped_scenarios_run(name: str, code: int) -> None:
     done = run("assess", f"scenarios/{name}.yaml")

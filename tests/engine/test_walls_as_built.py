@@ -128,7 +128,6 @@ def test_a_window_in_a_door_and_a_patch_beside_it() -> None:
     assert at(1.5, 1.3) == (sheet("lead glass", 0.004),)
     assert at(1.2, 1.3) == (sheet("lead", 0.003), sheet("lead", 0.001))
     assert at(3.0, 1.3) == (sheet("lead", 0.0005), sheet("gypsum board", 0.0125))
-    assert at(5.5, 1.3) == (sheet("gypsum board", 0.0125),)
 
 
 def test_a_window_in_a_screen() -> None:
@@ -184,3 +183,13 @@ def test_a_layer_known_by_its_lead_is_solved_and_named() -> None:
 
 def test_the_hands_breadth_is_named() -> None:
     assert any(a.topic == "hand's breadth" for a in build_scene(bay()).assumptions)
+
+
+def test_a_lining_to_the_end_of_a_wall_has_no_edge_there() -> None:
+    """Within a hand's breadth of the wall's end and of the floor, as if the whole side were made of it."""
+    lining = panel("lining", (0.0, 0.0), (5.0, 3.0), inside="lead 2 mm")
+    at = ("corner", (-0.02, -1.8, 0.9)), ("low", (1.2, -1.8, -1.0))
+    base = room()
+    full_side = replace(base.sides[0], make_up=make_up("lead 2 mm + gypsum board 12.5 mm"))
+    full = leaking(replace(base, sides=(full_side, *base.sides[1:])), *at)
+    assert leaking(room(panels=(lining,)), *at) == pytest.approx(full, rel=1e-9)

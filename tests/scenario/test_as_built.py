@@ -71,7 +71,7 @@ def panel(scenario: Scenario, name: str) -> Panel:
 
 
 def test_an_opening_in_an_opening_counts_from_its_edge(scenario: Scenario) -> None:
-    """0.2 m from the near edge of the door, which is 1 m along the side; the sill is over the floor; doors come first."""
+    """0.2 m from the near edge of the door, which is 1 m along the side; sills are over the floor; doors first."""
     names = [one.name for one in scenario.room.openings]
     assert names.index("door") < names.index("pane")
     pane = opening(scenario, "pane")

@@ -112,7 +112,7 @@ def remedy(scenario: Scenario, found: Scan, scene: Scene, material: str, limit: 
                 return result
             where = whole(found.surface)
         else:
-            again = scan(with_lining(scenario, result.lining), found.surface, found.standings, found.gap,
+            again = scan(with_lining(scenario, result.lining), found.surface, found.standings, found.gap, found.step,
                          kept_close=trial.kept)  # fmt: skip
             mine = [p for p in again.close if p.on_face not in again.openings]
             left = [p for p in mine if p.ratio > limit * (1.0 + CLOSE_ENOUGH)]

@@ -71,6 +71,7 @@ class Scan:
     close: tuple[PointResult, ...]
     standings: tuple[Standing, ...]
     gap: float
+    step: float
     openings: frozenset[tuple[float, float]] = frozenset()
     """Points, by their coordinates on the face, some of whose rays pass an opening in it."""
 
@@ -147,7 +148,7 @@ def scan(
         told(1.0)
     other = built.around.walls.opened.get(built.face_numbers[surface.face], 0) & ~(mine or 0)
     passed = frozenset(p.on_face for p, mask in zip(points, met, strict=True) if int(mask) & other)
-    return Scan(surface, grid, tuple(points), tuple(close), tuple(standings), gap, passed)
+    return Scan(surface, grid, tuple(points), tuple(close), tuple(standings), gap, step, passed)
 
 
 def _met(scene: Scene, surface: Surface, grid: ScanPoints) -> NDArray[np.int64]:

@@ -9,7 +9,7 @@ from scatterbay.advice.amend import Addition
 from scatterbay.advice.linings import with_panel
 from scatterbay.advice.remedies import Remedy, remedy
 from scatterbay.advice.scan import Scan, scan, standings_behind
-from scatterbay.advice.surfaces import GAP, names_of, surface_of
+from scatterbay.advice.surfaces import GAP, STEP, names_of, surface_of
 from scatterbay.engine.scene import build_scene
 from scatterbay.errors import UsageError
 from scatterbay.scenario.make_ups import make_up
@@ -64,6 +64,7 @@ def advise(
     gap: float = GAP,
     limit: float = 1.0,
     told: Told | None = None,
+    step: float = STEP,
 ) -> Advice:
     """Scan every surface that protects someone, openings first; solve each that misses a goal, with earlier additions.
 
@@ -83,7 +84,7 @@ def advise(
             continue
         if told:
             told(name)
-        found = surface_advice(current, scan(current, surface, standings, gap), materials, limit)
+        found = surface_advice(current, scan(current, surface, standings, gap, step), materials, limit)
         surfaces.append(found)
         best = next((one for one in found.remedies if one.sold is not None and not one.why_not), None)
         if best is not None and best.sold is not None and best.sold_layers is not None:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 
@@ -18,6 +19,8 @@ GROUND = ("earth", 3.0)
 """What stands for the ground under a floor that lies on it."""
 
 
+WITHIN = 1e-3
+"""How far within its ends a face is looked at for what lies beyond them [m]."""
 _Kind = tuple[Sheets, str]
 """A make-up, and the opening it is in; empty in none."""
 
@@ -93,7 +96,7 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
         if not openings and not panels:
             stacks.append((base,))
             continue
-        kinds, cells[number] = _cells(name, base, openings, panels, sheeter)
+        kinds, cells[number] = _cells(name, base, openings, panels, sheeter, _extent(room, number))
         stacks.append(tuple(stack for stack, _ in kinds))
         opened[number] = sum(1 << k for k, (_, opening) in enumerate(kinds) if opening)
         for k, (_, opening) in enumerate(kinds):
@@ -104,9 +107,17 @@ def fabric_of(room: Room, defined: Sequence[Material]) -> Fabric:
 
 
 def _cells(
-    name: str, base: Sheets, openings: Sequence[Opening], panels: Sequence[Panel], sheeter: _Sheeter
+    name: str,
+    base: Sheets,
+    openings: Sequence[Opening],
+    panels: Sequence[Panel],
+    sheeter: _Sheeter,
+    extent: Rectangle,
 ) -> tuple[tuple[_Kind, ...], Cells]:
-    """The kinds of a face, its own first, and where they are."""
+    """The kinds of a face, its own first, and where they are.
+
+    Beyond the ends of the face it is as it is just within them: what a ray finds there is another face's.
+    """
     rectangles = [Rectangle(one.low, one.high) for one in openings]
     rectangles += [Rectangle(one.low, one.high) for one in panels]
     first, second = cut(rectangles)
@@ -114,13 +125,27 @@ def _cells(
         raise OutOfRangeError(f"'{name}' is cut along more than {MOST_EDGES} edges in one direction")
     kinds: dict[_Kind, int] = {(base, ""): 0}
     numbers = np.zeros((first.size + 1, second.size + 1), dtype=np.int64)
-    for i, x in enumerate(middles(first)):
-        for j, y in enumerate(middles(second)):
+    columns = np.clip(middles(first), extent.low[0] + WITHIN, extent.high[0] - WITHIN)
+    rows = np.clip(middles(second), extent.low[1] + WITHIN, extent.high[1] - WITHIN)
+    for i, x in enumerate(columns):
+        for j, y in enumerate(rows):
             kind = _kind_at(name, base, (float(x), float(y)), openings, panels, sheeter)
             numbers[i, j] = kinds.setdefault(kind, len(kinds))
     if len(kinds) > MOST_KINDS:
         raise OutOfRangeError(f"'{name}' has more than {MOST_KINDS} different make-ups")
     return tuple(kinds), Cells(first, second, numbers)
+
+
+def _extent(room: Room, number: int) -> Rectangle:
+    """The corners of a face in its own coordinates; of ceiling and floor, the box around the plan."""
+    if number < len(room.sides):
+        side = room.sides[number]
+        return Rectangle((0.0, 0.0), (math.dist(side.start, side.end), room.height))
+    if number < len(room.sides) + 2:
+        x, y = zip(*room.corners, strict=True)
+        return Rectangle((min(x), min(y)), (max(x), max(y)))
+    screen = room.screens[number - len(room.sides) - 2]
+    return Rectangle((0.0, screen.bottom), (math.dist(screen.start, screen.end), screen.top))
 
 
 def _kind_at(

@@ -45,7 +45,7 @@ def build_panels(
             found.append(
                 parts.Panel(
                     name, panel.on, face, low, high, panel.make_up, panel.add_inside, panel.add_outside
-                )  # fmt: skip
+                )
             )
     return tuple(found)
 
