@@ -119,7 +119,7 @@ class Sight:
 
     @classmethod
     def between(cls, position: Array, place: Array, around: Surroundings) -> Sight:
-        """Look from positions (n, 3) to a place (3,)."""
+        """Look from positions (n, 3) to a place (3,), or each to its own (n, 3)."""
         ray = place - position
         length = np.sqrt(np.einsum("ij,ij->i", ray, ray))
         everything = np.arange(len(ray))
@@ -169,7 +169,25 @@ class Sight:
         return Sight(self.ray[chosen], self.length[chosen], ways, matter, self.around)
 
 
+def from_pairs(chunk: Readied, places: Array, around: Surroundings) -> Array:
+    """Dose at places (m, 3) from each scatter point of a chunk, per unit of output: (q, m, n)."""
+    count, many = len(chunk.points), len(places)
+    numbers = np.tile(np.arange(count), many)
+    shift = (count * np.arange(many))[:, None]
+    by_matter: list[tuple[Matter, Ints | slice]] = []
+    for matter, mine in chunk.by_matter:
+        whole = isinstance(mine, slice)
+        by_matter.append((matter, mine if whole else (shift + np.asarray(mine)).ravel()))
+    local = [((shift + rays).ravel(), energy, np.tile(amount, many)) for rays, energy, amount in chunk.local]
+    tiled = Readied(
+        chunk.points.some(numbers), chunk.before.some(numbers), chunk.per_total[numbers], by_matter, local
+    )  # fmt: skip
+    found = _from_chunk(tiled, np.repeat(places, count, axis=0), around)
+    return found.reshape(len(found), many, count)
+
+
 def _from_chunk(chunk: Readied, place: Array, around: Surroundings) -> Array:
+    """``place``: one (3,), or one for each point (n, 3)."""
     points = chunk.points
     sight = Sight.between(points.position, place, around)
     cosine = np.einsum("ij,ij->i", sight.ray, points.direction) / sight.length

@@ -25,6 +25,8 @@ MESH = 28
 """Gauss points across the field in each direction."""
 INCOMING = 7
 """Incoming angles at which the light of a patch is worked out, between the least and the greatest on it."""
+PAIRS = 16384
+"""Pairs of elements and places worked on at a time."""
 OUTGOING = np.linspace(0.0, 1.0, 26)
 """Outgoing cosines at which it is worked out."""
 
@@ -182,6 +184,39 @@ def _shine(beam: PrimaryBeam, patch: LitPatch, place: Array, around: Surrounding
         bright = low + (position - index) * (high - low)
         total += (bright * outgoing[seen] / square[seen]).sum(axis=1)
     return total
+
+
+def shine_on_many(beam: PrimaryBeam, patch: LitPatch, places: Array, around: Surroundings) -> Array:
+    """What a patch's elements send to places (n, 3) in front of them, (q, n): as for one place, over all pairs."""
+    count = len(patch.position)
+    total = np.zeros((len(dose.QUANTITIES), len(places)))
+    size = max(1, PAIRS // count)
+    for first in range(0, len(places), size):
+        some = places[first : first + size]
+        start, end = np.tile(patch.position, (len(some), 1)), np.repeat(some, count, axis=0)
+        ray = end - start
+        square = np.einsum("ij,ij->i", ray, ray)
+        outgoing = ray @ patch.normal / np.sqrt(square)
+        for group in around.walls.groups(around.walls.enclosure.crossings(start, end)):
+            if patch.next_face in [face for face, _, _ in group.signature]:
+                continue
+            seen = group.rays[outgoing[group.rays] > 0.0]
+            if not seen.size:
+                continue
+            light = patch.light(patch.signature + group.signature, beam.spectrum.energy_kev, around)
+            position = outgoing[seen] * (OUTGOING.size - 1)
+            index = np.minimum(position.astype(np.int64), OUTGOING.size - 2)
+            element = seen % count
+            low, high = light[:, element, index], light[:, element, index + 1]
+            bright = (low + (position - index) * (high - low)) * outgoing[seen] / square[seen]
+            for q, row in enumerate(bright):
+                total[q, first : first + size] += np.bincount(seen // count, row, len(some))
+    return total
+
+
+def primary_straight(beam: PrimaryBeam, place: Array, around: Surroundings) -> tuple[Array, Array]:
+    """At a place in the field: the uncollided dose, and that behind barriers lit all over; (q,) each."""
+    return _straight(beam, place, around)
 
 
 def _straight(beam: PrimaryBeam, place: Array, around: Surroundings) -> tuple[Array, Array]:
