@@ -19,7 +19,7 @@ ALLOWED = {
     "engine": {"scenario", "barriers", "physics", "geometry", "tables"},
     "exposure": {"units", "engine", "scenario", "physics", "tables"},
     "advice": {"exposure", "engine", "scenario", "geometry", "tables", "physics", "barriers", "units"},
-    "report": {"advice", "exposure", "engine", "scenario", "physics", "units"},
+    "report": {"advice", "geometry", "exposure", "engine", "scenario", "physics", "units"},
 }
 
 

@@ -22,8 +22,8 @@ def check_free(target: Path, force: bool) -> None:
         raise UsageError(f"{target} cannot be written: there is no folder {target.parent}")
 
 
-def write_whole(target: Path, text: str, force: bool) -> None:
-    """Write text to a file by way of a temporary one beside it.
+def write_whole(target: Path, content: str | bytes, force: bool) -> None:
+    """Write text or bytes to a file by way of a temporary one beside it.
 
     Raises
     ------
@@ -33,8 +33,8 @@ def write_whole(target: Path, text: str, force: bool) -> None:
     name = ""
     try:
         handle, name = tempfile.mkstemp(dir=target.parent, prefix=f".{target.name}-")
-        with os.fdopen(handle, "w", encoding="utf-8") as out:
-            out.write(text)
+        with os.fdopen(handle, "wb") as out:
+            out.write(content.encode("utf-8") if isinstance(content, str) else content)
         Path(name).chmod(0o644)
         os.replace(name, target)
     except OSError as error:
