@@ -91,8 +91,8 @@ def dose_map(
 
     Every second point each way is computed, and each point between two that differ by more than SMOOTH, or next to
     a wall; the rest is filled in by the logarithm. Where every second point would lie farther apart than what a hand's
-    breadth makes of the narrowest gap in a wall, all are computed. A thousand scatter points serve all of them, so that the map is
-    smooth; its error is stated. Travelling and stuck sources are left out.
+    breadth makes of the narrowest gap in a wall, all are computed. A thousand scatter points serve all of them, so
+    that the map is smooth; its error is stated. Travelling and stuck sources are left out.
 
     Raises
     ------
