@@ -11,6 +11,7 @@ from scatterbay.scenario.parts import MakeUp, Scenario
 if TYPE_CHECKING:
     import pandas as pd
 
+    from scatterbay.advice.comparison import Comparison
     from scatterbay.advice.whole import Advice, SurfaceAdvice
     from scatterbay.barriers.makeup import Sheets
     from scatterbay.engine.single import PatchGeometry
@@ -158,6 +159,21 @@ def advise(
     from scatterbay.advice.whole import advise as all_surfaces
 
     return all_surfaces(_checked(scenario), _materials(materials), limit=_share(limit, "limit"))
+
+
+def compare(*scenarios: Scenario | str | Path) -> Comparison:
+    """Scenarios side by side, the first being what the others are compared with.
+
+    Raises
+    ------
+    UsageError : fewer than two, or more than there are letters for.
+    """
+    from scatterbay.advice.comparison import compare as side_by_side
+    from scatterbay.errors import UsageError
+
+    if not 2 <= len(scenarios) <= 26:
+        raise UsageError("compare takes 2 to 26 scenarios")
+    return side_by_side([_checked(one) for one in scenarios])
 
 
 def _checked(scenario: Scenario | str | Path) -> Scenario:

@@ -20,7 +20,7 @@ def test_version() -> None:
 
 
 @pytest.mark.parametrize(
-    "command", ["assess", "wall", "advise", "barrier", "source", "lists", "new", "schema"]
+    "command", ["assess", "wall", "advise", "map", "compare", "barrier", "source", "lists", "new", "schema"]
 )
 def test_every_command_has_help_with_an_example(command: str) -> None:
     done = run(command, "--help")
@@ -133,6 +133,19 @@ def test_new_writes_a_scenario_that_runs_and_never_overwrites(tmp_path: Path) ->
     assert run("new", "weld-bay", "--force", cwd=tmp_path).returncode == 0
     assert run("new", "weld-bay", "-o", "no/such/folder/x.yaml", cwd=tmp_path).returncode == 2
     assert sorted(p.name for p in tmp_path.iterdir()) == ["weld-bay.yaml"]
+
+
+def test_new_has_a_medical_and_a_projector_start_and_refuses_what_is_not_validated(tmp_path: Path) -> None:
+    for kind, name in (("medical", "two-tube-room"), ("projector", "projector-job")):
+        assert run("new", kind, cwd=tmp_path).returncode == 0
+        assert (tmp_path / f"{kind}.yaml").read_text(encoding="utf-8") == (
+            TOP / f"scenarios/{name}.yaml"
+        ).read_text(encoding="utf-8")
+    for kind in ("ct", "fluoroscopy", "mammography", "dental"):
+        done = run("new", kind, cwd=tmp_path)
+        assert done.returncode == 3
+        assert "refused" in done.stderr
+    assert len(list(tmp_path.iterdir())) == 2
 
 
 def test_a_closed_pipe_is_not_an_error() -> None:

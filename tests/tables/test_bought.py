@@ -179,5 +179,6 @@ def test_receptors() -> None:
     found = receptors.receptors()
     assert found["table and receptor"].make_up == "lead 0.85 mm"
     assert found["receptor"].make_up == "lead 0.3 mm"
-    assert all(len(make_up(entry.make_up).layers) == 1 for entry in found.values())
-    assert all("recalled" in entry.source for entry in found.values())
+    assert found["patient, table and receptor"].make_up == f"{found['patient'].make_up} + lead 0.85 mm"
+    assert all(make_up(entry.make_up).layers for entry in found.values())
+    assert all("recalled" in entry.source or "judgement" in entry.source for entry in found.values())

@@ -7,7 +7,7 @@ from typing import Annotated
 import typer
 
 from scatterbay import __version__
-from scatterbay.cli import advise, assess, barrier, lists, map, new, schema, source, wall
+from scatterbay.cli import advise, assess, barrier, compare, lists, map, new, schema, source, wall
 
 app = typer.Typer(
     name="scatterbay",
@@ -24,6 +24,7 @@ app = typer.Typer(
 app.command("assess", short_help="Assess every occupied place of a bay.")(assess.command)
 app.command("wall", short_help="Scan the protected side of a wall; how much more of what.")(wall.command)
 app.command("advise", short_help="Scan the whole bay; what to add where.")(advise.command)
+app.command("compare", short_help="Scenarios side by side: changes, places, mass.")(compare.command)
 app.command("map", short_help="Draw the dose over the plan or a section.")(map.command)
 app.command("barrier", short_help="Transmission of one barrier, plane and lit patch.")(barrier.command)
 app.command("source", short_help="Spectrum, value layers and output of a source.")(source.command)

@@ -39,7 +39,7 @@ def command(
         for entry in folder("scenarios").iterdir()
         if entry.name.endswith(".yaml")
     )
-    kind = STARTS.get(kind, kind)
+    asked, kind = kind, STARTS.get(kind, kind)
     refused = not_validated(kind) or not_validated(kind.upper())
     if refused:
         raise OutOfRangeError(f"rooms for {refused} are refused: nothing here was validated for them")
@@ -47,7 +47,7 @@ def command(
         near = nearest(kind, kinds)
         hint = f"did you mean '{near}'? " if near else ""
         raise UsageError(f"'{kind}' is not a kind of scenario; {hint}there are: {', '.join(kinds)}")
-    target = output or Path(f"{kind}.yaml")
+    target = output or Path(f"{asked}.yaml")
     write_whole(target, (folder("scenarios") / f"{kind}.yaml").read_text(encoding="utf-8"), force)
     typer.echo(f"wrote {target}; next: scatterbay assess {target}", err=True)
     return 0
