@@ -161,6 +161,36 @@ def advise(
     return all_surfaces(_checked(scenario), _materials(materials), limit=_share(limit, "limit"))
 
 
+def worksheet(
+    scenario: Scenario | str | Path, height: str = "1.0 m", points: int = 120, with_advice: bool = False
+) -> str:
+    """The draft worksheet of a scenario, as HTML.
+
+    Parameters
+    ----------
+    height : of the plan above the floor. points : of the plan, along its longer side.
+    with_advice : whether every surface is scanned, and what to add is said.
+    """
+    from scatterbay.advice.barrier_facts import barrier_facts
+    from scatterbay.advice.dose_map import Plane, dose_map
+    from scatterbay.engine.contributions import contributions
+    from scatterbay.engine.scene import build_scene
+    from scatterbay.exposure.assess import assess as judge
+    from scatterbay.report.plan import plan_svg
+    from scatterbay.report.worksheet.sheet import Paper
+    from scatterbay.report.worksheet.sheet import worksheet as written
+    from scatterbay.tables.files import titles
+    from scatterbay.units import read
+
+    checked = _checked(scenario)
+    scene = build_scene(checked)
+    found = judge(checked, scene, contributions(scene))
+    plane = Plane(2, read(height, "length").value)
+    plan = plan_svg(checked, plane, dose_map(checked, plane, count=points), found)
+    advised = advise(checked) if with_advice else None
+    return written(Paper(checked, found, barrier_facts(checked, scene), plan, titles(), advised))
+
+
 def compare(*scenarios: Scenario | str | Path) -> Comparison:
     """Scenarios side by side, the first being what the others are compared with.
 

@@ -20,7 +20,20 @@ def test_version() -> None:
 
 
 @pytest.mark.parametrize(
-    "command", ["assess", "wall", "advise", "map", "compare", "barrier", "source", "lists", "new", "schema"]
+    "command",
+    [
+        "assess",
+        "wall",
+        "advise",
+        "map",
+        "compare",
+        "worksheet",
+        "barrier",
+        "source",
+        "lists",
+        "new",
+        "schema",
+    ],
 )
 def test_every_command_has_help_with_an_example(command: str) -> None:
     done = run(command, "--help")

@@ -18,7 +18,7 @@ MAKERS = {
 }
 BY_HAND = {
     "materials.csv", "dose-conversion.csv", "allowances.csv", "transmission-fits.csv", "stock.csv", "rules.csv",
-    "occupancy.csv", "containers.csv", "receptors.csv", "sheets.csv",
+    "occupancy.csv", "containers.csv", "receptors.csv", "sheets.csv", "checklist.csv",
 }  # fmt: skip
 
 

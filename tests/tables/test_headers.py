@@ -22,7 +22,15 @@ NUMBERS = {
     "nuclides.csv": "half_life_s", "pair.csv": "pair", "transmission-fits.csv": "a",
 }  # fmt: skip
 """A column of numbers in each table that has one."""
-WORDS = {"containers.csv", "occupancy.csv", "receptors.csv", "rules.csv", "sheets.csv", "stock.csv"}
+WORDS = {
+    "checklist.csv",
+    "containers.csv",
+    "occupancy.csv",
+    "receptors.csv",
+    "rules.csv",
+    "sheets.csv",
+    "stock.csv",
+}
 """Tables of texts, which the scenario's own readers read."""
 
 

@@ -7,7 +7,7 @@ from typing import Annotated
 import typer
 
 from scatterbay import __version__
-from scatterbay.cli import advise, assess, barrier, compare, lists, map, new, schema, source, wall
+from scatterbay.cli import advise, assess, barrier, compare, lists, map, new, schema, source, wall, worksheet
 
 app = typer.Typer(
     name="scatterbay",
@@ -26,6 +26,7 @@ app.command("wall", short_help="Scan the protected side of a wall; how much more
 app.command("advise", short_help="Scan the whole bay; what to add where.")(advise.command)
 app.command("compare", short_help="Scenarios side by side: changes, places, mass.")(compare.command)
 app.command("map", short_help="Draw the dose over the plan or a section.")(map.command)
+app.command("worksheet", short_help="Write the draft worksheet as one HTML file.")(worksheet.command)
 app.command("barrier", short_help="Transmission of one barrier, plane and lit patch.")(barrier.command)
 app.command("source", short_help="Spectrum, value layers and output of a source.")(source.command)
 app.command("lists", short_help="Stock, rule sets, occupancy and other lists to take names from.")(

@@ -100,3 +100,13 @@ def _read_header(name: str, lines: Sequence[str]) -> tuple[dict[str, str], int]:
 def split_names(text: str) -> tuple[str, ...]:
     """The names in a cell that lists them with semicolons."""
     return tuple(name.strip() for name in text.split(";") if name.strip())
+
+
+def titles() -> list[tuple[str, str]]:
+    """Title of each shipped table, and its source with how it was obtained, by file name."""
+    found = []
+    for entry in sorted(folder("data").iterdir(), key=lambda one: one.name):
+        if entry.name.endswith(".csv"):
+            header, _ = _read_header(entry.name, entry.read_text(encoding="utf-8").splitlines())
+            found.append((header["title"], f"{header['source']}; obtained: {header['obtained']}"))
+    return found

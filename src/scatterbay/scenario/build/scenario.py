@@ -7,7 +7,7 @@ from collections.abc import Mapping
 from scatterbay.scenario import parts
 from scatterbay.scenario.build.beams import build_beams, check_not_buried
 from scatterbay.scenario.build.bodies import build_bodies, check_bodies, solids_of
-from scatterbay.scenario.build.findings import Findings, Section, names_in, whole
+from scatterbay.scenario.build.findings import Findings, Section, names_in, usable, whole
 from scatterbay.scenario.build.materials import build_materials
 from scatterbay.scenario.build.people import build_people
 from scatterbay.scenario.build.places import build_places, check_places
@@ -79,6 +79,18 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
         findings.assumptions,
         whole(document.purpose) or "",
         whole(document.notes) or (),
+        _paper(document),
+        tuple(usable(document.stated or {}).items()),
+    )
+
+
+def _paper(document: Document) -> tuple[tuple[str, str], ...]:
+    """What the worksheet says about itself, in the order of the form."""
+    paper = whole(document.document)
+    if paper is None:
+        return ()
+    return tuple(
+        (name, value) for name in type(paper).model_fields if (value := getattr(paper, name)) is not None
     )
 
 

@@ -31,6 +31,17 @@ class Material(Form):
     density: Density = Field(description="Density")
 
 
+class Paper(Form):
+    """What a worksheet says about itself; every line is printed as it stands."""
+
+    reference: Text | None = Field(None, description="Reference of the worksheet")
+    revision: Text | None = Field(None, description="Its revision")
+    date: Text | None = Field(None, description="Its date")
+    author: Text | None = Field(None, description="Who drew it up")
+    adviser: Text | None = Field(None, description="The qualified expert or adviser it goes to")
+    site: Text | None = Field(None, description="Where the bay is")
+
+
 class Document(Form):
     """A scenario: a room, what is in it, what radiates, and who stands where."""
 
@@ -39,6 +50,11 @@ class Document(Form):
     drawing: Maybe[Text | None] = Field(None, description="The drawing it was taken from, with its revision")
     purpose: Maybe[Purpose | None] = Field(None, description="What the room is for")
     notes: Maybe[Notes | None] = Field(None, description="Remarks")
+    document: Maybe[Paper | None] = Field(None, description="Who stands behind the worksheet")
+    stated: Maybe[dict[str, Maybe[Text]] | None] = Field(
+        None,
+        description="What the author states about the bay, by subject, such as interlocks, signals, penetrations",
+    )
     room: Maybe[Room] = Field(description="The room")
     materials: Maybe[dict[str, Maybe[Material]]] = Field({}, description="Materials of your own, by name")
     stock: Maybe[dict[str, Maybe[MakeUp]]] = Field(

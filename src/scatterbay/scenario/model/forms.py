@@ -6,7 +6,7 @@ from collections.abc import Mapping
 
 from scatterbay.scenario.model import bodies, room, sources, use
 from scatterbay.scenario.model.base import Form
-from scatterbay.scenario.model.document import Document, Material
+from scatterbay.scenario.model.document import Document, Material, Paper
 from scatterbay.scenario.yaml_tree import Data, Path
 
 _SECTIONS: dict[str, type[Form]] = {
@@ -17,7 +17,7 @@ _SECTIONS: dict[str, type[Form]] = {
     "people": use.People,
     "places": use.Place,
 }
-_WHOLE: dict[str, type[Form]] = {"room": room.Room, "options": use.Options}
+_WHOLE: dict[str, type[Form]] = {"room": room.Room, "options": use.Options, "document": Paper}
 _SHAPES: dict[str, type[Form]] = {
     "box": bodies.Box,
     "cylinder": bodies.Cylinder,

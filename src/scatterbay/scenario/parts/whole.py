@@ -49,3 +49,7 @@ class Scenario:
     assumptions: tuple[Assumption, ...] = field(default=())
     purpose: str = ""
     notes: tuple[str, ...] = ()
+    document: tuple[tuple[str, str], ...] = ()
+    """Revision, author and so on of the worksheet, by label, as the author states them."""
+    stated: tuple[tuple[str, str], ...] = ()
+    """Interlocks, signals and so on, by subject, as the author states them; nothing is computed from them."""

@@ -1,0 +1,1 @@
+"""The draft worksheet: one HTML file that a qualified expert can check and sign against."""
