@@ -192,18 +192,22 @@ def worksheet(
 
 
 def compare(*scenarios: Scenario | str | Path) -> Comparison:
-    """Scenarios side by side, the first being what the others are compared with.
+    """Scenarios side by side, or one with the variants it names; the first is what the others are compared with.
 
     Raises
     ------
     UsageError : fewer than two, or more than there are letters for.
     """
     from scatterbay.advice.comparison import compare as side_by_side
+    from scatterbay.advice.variants import variants_of
     from scatterbay.errors import UsageError
 
-    if not 2 <= len(scenarios) <= 26:
-        raise UsageError("compare takes 2 to 26 scenarios")
-    return side_by_side([_checked(one) for one in scenarios])
+    options = [_checked(one) for one in scenarios]
+    if len(options) == 1:
+        options += variants_of(options[0])
+    if not 2 <= len(options) <= 26:
+        raise UsageError("compare takes 2 to 26 scenarios, or one that names variants")
+    return side_by_side(options)
 
 
 def _checked(scenario: Scenario | str | Path) -> Scenario:

@@ -94,7 +94,7 @@ def changed(before: str, after: str) -> tuple[Change, ...]:
     )
     found = []
     for where in dict.fromkeys([*one, *two]):
-        if one.get(where) != two.get(where):
+        if one.get(where) != two.get(where) and not where.startswith("variants."):
             found.append(Change(where, one.get(where, ""), two.get(where, "")))
     return tuple(found)
 

@@ -9,7 +9,10 @@ import typer
 
 
 def command(
-    files: Annotated[list[Path], typer.Argument(help="Two scenario files or more.", show_default=False)],
+    files: Annotated[
+        list[Path],
+        typer.Argument(help="Two scenario files or more, or one that names variants.", show_default=False),
+    ],
     json: Annotated[bool, typer.Option("--json", help="Print JSON: every number with its unit.")] = False,
     csv: Annotated[bool, typer.Option("--csv", help="Print CSV: a row per place and scenario.")] = False,
 ) -> int:

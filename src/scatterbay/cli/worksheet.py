@@ -18,19 +18,29 @@ def command(
     advice: Annotated[
         bool, typer.Option("--advice", help="Scan every surface too, and say what to add.")
     ] = False,
+    csv: Annotated[
+        Path | None,
+        typer.Option("--csv", help="Write the tables of places to this file too, for a spreadsheet."),
+    ] = None,
     force: Annotated[bool, typer.Option("--force", help="Overwrite a file that exists.")] = False,
 ) -> int:
     """Write the draft worksheet: one HTML file for a qualified expert to check, change and sign against.
 
     Example: scatterbay worksheet weld-bay.yaml -o weld-bay.html
     """
-    from scatterbay.api import worksheet
+    from scatterbay.api import assess, worksheet
     from scatterbay.cli.files import check_free, write_whole
     from scatterbay.errors import UsageError
+    from scatterbay.report.records import assessment_rows
+    from scatterbay.report.text import as_csv
 
     if output.suffix not in (".html", ".htm"):
         raise UsageError(f"{output} does not end in .html")
     check_free(output, force)
+    if csv is not None:
+        check_free(csv, force)
     write_whole(output, worksheet(file, height, points, advice), force)
+    if csv is not None:
+        write_whole(csv, as_csv(assessment_rows(assess(file))), force)
     typer.echo(f"wrote {output}: a draft for a qualified expert, as every output here", err=True)
     return 0

@@ -23,6 +23,7 @@ from scatterbay.exposure.results import (
     Factors,
     Figure,
     GoalResult,
+    Overridden,
     PathShare,
     PlaceResult,
 )
@@ -104,7 +105,9 @@ def _place(
     factors: _Factors,
 ) -> PlaceResult:
     middle, low, high = (rates_of(rows, factors.at(end), _shape(rows)) for end in (0, -1, 1))
-    figures = _figures(timing, place, middle, low, high)
+    computed = _figures(timing, place, middle, low, high)
+    replaced = _overridden(scenario, place, computed)
+    figures = computed | {(one.figure.time_base, one.figure.quantity): one.figure for one in replaced}
     people = next(group for group in scenario.people if group.name == place.people)
     goals = tuple(
         GoalResult(goal.text, figure := figures[goal.time_base, goal.quantity], goal.value,
@@ -141,8 +144,22 @@ def _place(
         behind=min(spot.behind.values(), key=_WORST_FIRST.index),
         cycles=cycle_doses(timing, middle),
         stuck=stuck_doses(scene, rows),
+        overridden=replaced,
         survey_rate=survey_rate(scene, timing, middle),
     )
+
+
+def _overridden(
+    scenario: Scenario, place: Place, computed: dict[tuple[str, str], Figure]
+) -> tuple[Overridden, ...]:
+    """A reviewer's own figures for a place, which have no band of ours."""
+    found = []
+    for one in scenario.overrides:
+        if one.place == place.name:
+            base, quantity, value = one.figure.time_base, one.figure.quantity, one.figure.value
+            mine = Figure(base, quantity, value, 0.0, value, value)
+            found.append(Overridden(computed[base, quantity], mine, one.by, one.why))
+    return tuple(found)
 
 
 def _figures(

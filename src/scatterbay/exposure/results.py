@@ -115,6 +115,16 @@ class Capacity:
 
 
 @dataclass(frozen=True)
+class Overridden:
+    """A figure that a reviewer replaced: the computed one, the reviewer's, who and why."""
+
+    computed: Figure
+    figure: Figure
+    by: str
+    why: str
+
+
+@dataclass(frozen=True)
 class PlaceResult:
     """Everything about one place."""
 
@@ -141,6 +151,8 @@ class PlaceResult:
     """The worst of what lies between the place and anything that radiates: open, lining, wall."""
     cycles: tuple[CycleDose, ...] = ()
     stuck: tuple[StuckDose, ...] = ()
+    overridden: tuple[Overridden, ...] = ()
+    """Figures that a reviewer replaced, with the computed ones."""
     survey_rate: dict[str, float] | None = None
     """Highest rate on the day of a planned survey; None where no day is stated."""
 

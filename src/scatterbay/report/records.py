@@ -101,8 +101,18 @@ def _capacity(one: Capacity) -> dict[str, Any]:
 
 
 def _states(place: PlaceResult, quantity: str) -> dict[str, Any]:
-    """Exposure cycles, a source that is stuck, the day of a survey."""
+    """Overrides, exposure cycles, a source that is stuck, the day of a survey."""
     return {
+        "overridden": [
+            {
+                "time_base": one.figure.time_base,
+                "computed": _figure(one.computed),
+                "used": _figure(one.figure),
+                "by": one.by,
+                "why": one.why,
+            }
+            for one in place.overridden
+        ],
         "cycles": [
             {
                 "beam": one.beam,

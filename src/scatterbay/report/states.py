@@ -4,10 +4,10 @@ from __future__ import annotations
 
 import math
 
-from scatterbay.exposure.results import Assessment, Capacity, PlaceResult
+from scatterbay.exposure.results import Assessment, Capacity, Overridden, PlaceResult
 from scatterbay.exposure.timebases import DAY
 from scatterbay.report.screen import Screen
-from scatterbay.report.words import SYMBOLS, spoken
+from scatterbay.report.words import BASES, SYMBOLS, band, spoken
 from scatterbay.units import format_quantity, significant
 
 
@@ -24,7 +24,7 @@ def state_sentences(place: PlaceResult) -> list[str]:
     def said(value: float) -> str:
         return spoken(value, "hour", quantity)
 
-    found = []
+    found = [override_sentence(one) for one in place.overridden]
     for cycle in place.cycles:
         whole = said(cycle.exposed[quantity] + cycle.passes[quantity])
         long = format_quantity(cycle.seconds, "time")
@@ -45,6 +45,15 @@ def state_sentences(place: PlaceResult) -> list[str]:
             f"highest rate on the day of the survey: {rate} {SYMBOLS[quantity]}, scatter in the room left out"
         )
     return found
+
+
+def override_sentence(one: Overridden) -> str:
+    """A figure that a reviewer replaced, both values shown."""
+    base, quantity = one.figure.time_base, one.figure.quantity
+    mine, ours = (spoken(figure.value, base, quantity) for figure in (one.figure, one.computed))
+    return (
+        f"{BASES[base]}: {mine} by {one.by} ({one.why}) instead of {ours} as computed, {band(one.computed)}"
+    )
 
 
 def show_capacities(assessment: Assessment, screen: Screen) -> None:

@@ -49,6 +49,7 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
     together = _never_together(document, expanded.named, findings)
     options = _options(document, findings)
     check_stock(document, findings)
+    overrides = _overrides(document, people, places, findings)
     spoken_of = not_validated(whole(document.title) or "")
     if spoken_of:
         findings.assume(
@@ -80,8 +81,32 @@ def build(document: Document, path: str, text: str, sha256: str, findings: Findi
         whole(document.purpose) or "",
         whole(document.notes) or (),
         _paper(document),
+        overrides,
         tuple(usable(document.stated or {}).items()),
     )
+
+
+def _overrides(
+    document: Document, people: tuple[parts.People, ...], places: tuple[parts.Place, ...], findings: Findings
+) -> tuple[parts.Override, ...]:
+    """A reviewer's own figures, one for each place, time base and quantity."""
+    found: dict[tuple[str, str, str], parts.Override] = {}
+    known = names_in(document.places)
+    for name, entry in usable(document.overrides).items():
+        path = ("overrides", name)
+        if known is not None and entry.place not in known:
+            findings.unknown((*path, "place"), "place", entry.place, known)
+            continue
+        key = entry.place, entry.figure.time_base, entry.figure.quantity
+        if key in found:
+            message = f"'{found[key].name}' overrides the same figure"
+            findings.wrong((*path, "figure"), message, "keep one of the two")
+            continue
+        found[key] = parts.Override(name, entry.place, entry.figure, entry.by, entry.why)
+        findings.assume(
+            "overrides", f"{entry.figure.text} at {entry.place} is put there by {entry.by}: {entry.why}", name
+        )
+    return tuple(found.values())
 
 
 def _paper(document: Document) -> tuple[tuple[str, str], ...]:

@@ -42,6 +42,7 @@ class Form(BaseModel):
         frozen=True,
         allow_inf_nan=False,
         arbitrary_types_allowed=True,
+        defer_build=True,  # only the whole document is ever validated: its parts need no validator of their own
         alias_generator=file_key,
         field_title_generator=_title,
     )

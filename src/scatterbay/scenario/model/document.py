@@ -17,10 +17,11 @@ from scatterbay.scenario.model.kinds import (
     Notes,
     Purpose,
     Text,
+    Variant,
 )
 from scatterbay.scenario.model.room import Room
 from scatterbay.scenario.model.sources import Source
-from scatterbay.scenario.model.use import Beam, Options, People, Place, Technique, Workload
+from scatterbay.scenario.model.use import Beam, Options, Override, People, Place, Technique, Workload
 
 
 class Material(Form):
@@ -75,10 +76,29 @@ class Document(Form):
     never_together: Maybe[NameLists | None] = Field(
         None, description="Lists of beams that are never on at the same time; all others run together"
     )
+    overrides: Maybe[dict[str, Maybe[Override]]] = Field(
+        {}, description="A reviewer's own figures instead of computed ones, by name, with who and why"
+    )
+    variants: Maybe[dict[str, Maybe[Variant]]] = Field(
+        {},
+        description="Other values to compare with, by name of the variant: where they stand, and what stands there",
+    )
     options: Maybe[Options | None] = Field(None, description="Choices about the calculation")
 
 
-NAMED = ("materials", "stock", "bodies", "sources", "beams", "workload", "techniques", "people", "places")
+NAMED = (
+    "materials",
+    "stock",
+    "bodies",
+    "sources",
+    "beams",
+    "workload",
+    "techniques",
+    "people",
+    "places",
+    "overrides",
+    "variants",
+)
 """Sections whose entries are named by the author."""
 
 NAMED_IN_ROOM = ("sides", "openings", "screens", "panels")

@@ -16,6 +16,7 @@ _SECTIONS: dict[str, type[Form]] = {
     "techniques": use.Technique,
     "people": use.People,
     "places": use.Place,
+    "overrides": use.Override,
 }
 _WHOLE: dict[str, type[Form]] = {"room": room.Room, "options": use.Options, "document": Paper}
 _SHAPES: dict[str, type[Form]] = {

@@ -235,4 +235,17 @@ CollimatorText: TypeAlias = Annotated[
         schemas.text("Material and thickness, or transmission", "tungsten 20 mm", "1/200", "tungsten, 1/200"),
     ),
 ]
+Variant: TypeAlias = Annotated[
+    dict[str, str],
+    FromText(
+        readers.variant,
+        {
+            "type": "object",
+            "minProperties": 1,
+            "description": "Where a value stands, as keys joined by dots, and the text that stands there instead",
+            "examples": [{"room.sides.north": "concrete 300 mm + lead 2 mm"}],
+        },
+    ),
+]
+OneGoal: TypeAlias = Annotated[parts.Goal, FromText(readers.one_goal, _GOAL)]
 Goals: TypeAlias = Annotated[tuple[parts.Goal, ...], FromText(readers.goals, _GOALS)]

@@ -125,6 +125,18 @@ def goals(value: Data, names: Names) -> tuple[parts.Goal, ...]:
     return tuple(each(enumerate(value), _goal))
 
 
+def variant(value: Data, names: Names) -> dict[str, str]:
+    """Values to be put elsewhere in the file, by where they stand."""
+    if not isinstance(value, Mapping) or not value:
+        raise TextError("a variant is a mapping", "write {room.sides.north: concrete 300 mm + lead 2 mm}")
+    return dict(zip(value, each(value.items(), lambda one: written(one, "'concrete 300 mm'")), strict=True))
+
+
+def one_goal(value: Data, names: Names) -> parts.Goal:
+    """A figure with its time base, written as a design goal is."""
+    return _goal(value)
+
+
 def _goal(value: Data) -> parts.Goal:
     return goal_text.goal(written(value, "'6 mSv/year'"))
 

@@ -21,6 +21,7 @@ from scatterbay.scenario.model.kinds import (
     Length,
     LengthFromZero,
     Name,
+    OneGoal,
     Output,
     PlanPosition,
     Position,
@@ -121,6 +122,15 @@ class Place(Form):
         None, description="Kind of space, to be told the occupancy factor suggested for it (never applied)"
     )
     occupancy: Factor | None = Field(None, description="Share of the time someone is there; 1 if left out")
+
+
+class Override(Form):
+    """A reviewer's own figure, judged instead of the computed one; both are shown."""
+
+    place: Name = Field(description="Name of the place")
+    figure: OneGoal = Field(description="The figure with its time base, as a goal is written")
+    by: Text = Field(description="Who puts it there")
+    why: Text = Field(description="Why")
 
 
 class Options(Form):

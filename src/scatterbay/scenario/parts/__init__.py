@@ -26,7 +26,7 @@ from scatterbay.scenario.parts.sources import (
     Travel,
     XrayTube,
 )
-from scatterbay.scenario.parts.use import Beam, Collimator, Field, Goal, People, Place, Workload
+from scatterbay.scenario.parts.use import Beam, Collimator, Field, Goal, Override, People, Place, Workload
 from scatterbay.scenario.parts.whole import Assumption, Options, Scenario
 
 __all__ = [
@@ -44,6 +44,7 @@ __all__ = [
     "MaterialDefinition",
     "Opening",
     "Options",
+    "Override",
     "Panel",
     "People",
     "Place",

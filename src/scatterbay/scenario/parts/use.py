@@ -93,6 +93,17 @@ class Goal:
 
 
 @dataclass(frozen=True)
+class Override:
+    """A reviewer's own figure in the place of a computed one: where, what (as a goal says it), who and why."""
+
+    name: str
+    place: str
+    figure: Goal
+    by: str
+    why: str
+
+
+@dataclass(frozen=True)
 class People:
     """A group of people and their design goals. ``area``: the area they are in where a place does not say."""
 

@@ -6,7 +6,7 @@ from dataclasses import dataclass, field
 
 from scatterbay.scenario.parts.fabric import Body, MaterialDefinition, Room
 from scatterbay.scenario.parts.sources import Source
-from scatterbay.scenario.parts.use import Beam, People, Place, Workload
+from scatterbay.scenario.parts.use import Beam, Override, People, Place, Workload
 
 
 @dataclass(frozen=True)
@@ -51,5 +51,6 @@ class Scenario:
     notes: tuple[str, ...] = ()
     document: tuple[tuple[str, str], ...] = ()
     """Revision, author and so on of the worksheet, by label, as the author states them."""
+    overrides: tuple[Override, ...] = ()
     stated: tuple[tuple[str, str], ...] = ()
     """Interlocks, signals and so on, by subject, as the author states them; nothing is computed from them."""
