@@ -144,3 +144,24 @@ def test_no_interpolation_across_the_edge() -> None:
     assert low / high > 2.0
     assert low == pytest.approx(below, rel=0.2)
     assert high == pytest.approx(above, rel=0.2)
+
+
+@pytest.mark.parametrize(
+    "layers",
+    [
+        (("lead", 0.06),),
+        (("steel", 0.01), ("lead", 0.08), ("steel", 0.01)),
+        (("concrete", 2.0),),
+        (("earth", 3.0),),
+        (("tungsten", 0.05),),
+    ],
+)
+def test_a_thick_wall_lets_less_through_at_a_slant(layers: tuple[tuple[str, float], ...]) -> None:
+    """Limit: down to 88 degrees no direction beats square on, also where what passes is too little to be told."""
+    found = build_answer(tuple(sheet(name, thickness) for name, thickness in layers))
+    cosines = np.exp(np.linspace(0.0, np.log(found.cosines[0]), 60))
+    energy = np.geomspace(12.0, 1390.0, 80)
+    log = found.log_dose(energy, cosines)
+    assert (log <= np.maximum(log[:, :, :1] + 1e-6, np.log(1e-65))).all()
+    emergent = found.emergent(energy, cosines, np.array([0.2, 0.6, 0.95]))
+    assert (emergent.sum(axis=-1) <= 1.05 * emergent.sum(axis=-1)[:, :, :1] + 1e-75).all()

@@ -60,6 +60,22 @@ class Answer:
         return result
 
     @cached_property
+    def _log_straight(self) -> Array:
+        """ln of the uncollided share at the nodes, (n, a): never too small to be told."""
+        return -self.optical_depth(self.energy_kev)[:, None] / self.cosines
+
+    def _log_scattered(self, values: Array) -> Array:
+        """ln of scattered values at the nodes (n, a, ...), also where they are too small to be told.
+
+        There the value of the nearest steeper direction is taken, which is higher: a floor instead, far under its
+        neighbours, would send the spline over the cosine astray.
+        """
+        log = np.log(np.maximum(values, FLOOR))
+        for k in range(log.shape[1] - 2, -1, -1):
+            log[:, k] = np.where(values[:, k] > FLOOR, log[:, k], log[:, k + 1])
+        return log
+
+    @cached_property
     def stretches(self) -> list[slice]:
         """Runs of energies between K edges: nothing is interpolated from one to the next."""
         falling = grid_for(k_elements(self.sheets)).stretch_of(self.energy_kev)
@@ -76,11 +92,8 @@ class Answer:
         OutOfRangeError : an energy outside 10 to 1400 keV.
         """
         energy = check_energy(energy_kev)
-        nodes_in = np.exp(-self.optical_depth(self.energy_kev)[:, None] / self.cosines)
-        total = (
-            self.diffuse.sum(axis=-1) + nodes_in[:, :, None] * dose.per_fluence(self.energy_kev).T[:, None, :]
-        )
-        log = np.log(np.maximum(total, FLOOR))
+        straight = self._log_straight[:, :, None] + np.log(dose.per_fluence(self.energy_kev).T)[:, None, :]
+        log = np.logaddexp(straight, self._log_scattered(self.diffuse.sum(axis=-1)))
         fine = np.einsum("ca,naq->ncq", spline_matrix(self.cosines, cosines), log * self.cosines[:, None])
         return self._over_energy(energy, np.moveaxis(fine / cosines[:, None], 0, -1)).transpose(1, 2, 0)
 
@@ -90,7 +103,7 @@ class Answer:
         The azimuth is averaged. Interpolated like ``log_dose``, and over the outgoing cosine by a cubic.
         """
         energy = check_energy(energy_kev)
-        log = np.log(np.maximum(self.diffuse / self.outgoing_weights, FLOOR))
+        log = self._log_scattered(self.diffuse / self.outgoing_weights)
         fine = np.einsum(
             "ca,naqm->ncqm", spline_matrix(self.cosines, incoming), log * self.cosines[:, None, None]
         )
