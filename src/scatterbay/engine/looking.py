@@ -45,7 +45,7 @@ def scene_places(scenario: Scenario, walls: Walls, bodies: Bodies) -> tuple[Scen
     room = walls.enclosure
     looks = _looks(scenario, bodies)
     sources = np.concatenate([points for (_, state), points in looks.items() if state != STUCK])
-    inside = bool(room.inside(sources[: len(sources)]).all())
+    inside = bool(room.inside(sources).all())
     closed = all(stack for kinds in walls.stacks[: room.floor + 1] for stack in kinds)
     found = []
     for place in scenario.places:

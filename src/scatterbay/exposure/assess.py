@@ -12,7 +12,7 @@ from scatterbay.engine.looking import STUCK, ScenePlace
 from scatterbay.engine.scene import Scene
 from scatterbay.exposure.capacity import Judged, capacities
 from scatterbay.exposure.cycles import cycle_doses, stuck_doses, survey_rate
-from scatterbay.exposure.rates import Rates, rates_of
+from scatterbay.exposure.rates import Rates, by_quantity, rates_of
 from scatterbay.exposure.results import (
     ABOVE,
     BELOW,
@@ -199,21 +199,16 @@ def _shares(rows: Sequence[Contribution], factors: _Factors, timing: Timing) -> 
                 row.beam,
                 row.path,
                 row.order,
-                _by_quantity(rate),
+                by_quantity(rate),
                 dict(zip(dose.QUANTITIES, map(float, error), strict=True)),
                 row.bound,
                 row.state,
                 factors.behind(row),
-                {} if seconds is None else _by_quantity(seconds * rate),
+                {} if seconds is None else by_quantity(seconds * rate),
             )
         )
     main = dose.AMBIENT
     return tuple(sorted(shares, key=lambda s: (s.bound, -s.week.get(main, 0.0), -s.rate[main])))
-
-
-def _by_quantity(values: Array) -> dict[str, float]:
-    """Means over the replicates (replicates, q)."""
-    return dict(zip(dose.QUANTITIES, map(float, values.mean(axis=0)), strict=True))
 
 
 def _multiplied(timing: Timing) -> tuple[Factors, ...]:

@@ -11,10 +11,9 @@ from numpy.typing import NDArray
 from scatterbay.engine.contributions import Contribution
 from scatterbay.engine.looking import STUCK
 from scatterbay.engine.scene import Scene
-from scatterbay.exposure.rates import Rates
+from scatterbay.exposure.rates import Rates, by_quantity
 from scatterbay.exposure.results import CycleDose, StuckDose
 from scatterbay.exposure.timebases import PASSES, Timing, instantaneous
-from scatterbay.physics import dose
 
 Array = NDArray[np.float64]
 
@@ -27,9 +26,7 @@ def cycle_doses(timing: Timing, rates: Rates) -> tuple[CycleDose, ...]:
             continue
         seconds = load.seconds_per_week / load.cycles[0]
         passes = PASSES * rates.passes.get(timing.source_of[name], rates.nothing)
-        found.append(
-            CycleDose(name, seconds, _by_quantity(seconds * rates.whole(name)), _by_quantity(passes))
-        )
+        found.append(CycleDose(name, seconds, by_quantity(seconds * rates.whole(name)), by_quantity(passes)))
     return tuple(found)
 
 
@@ -37,7 +34,7 @@ def stuck_doses(scene: Scene, rows: Sequence[Contribution]) -> tuple[StuckDose, 
     """Dose of every source that is asked about as stuck."""
     seconds = {one.source: one.seconds for one in scene.stuck}
     return tuple(
-        StuckDose(row.beam, seconds[row.beam], _by_quantity(seconds[row.beam] * row.drive * row.values))
+        StuckDose(row.beam, seconds[row.beam], by_quantity(seconds[row.beam] * row.drive * row.values))
         for row in rows
         if row.state == STUCK
     )
@@ -55,9 +52,4 @@ def survey_rate(scene: Scene, timing: Timing, rates: Rates) -> dict[str, float] 
         minute={name: share.get(name, 1.0) * rate for name, rate in rates.minute.items()},
     )
     whole = {beam.name: scaled.whole(beam.name) for beam in timing.beams}
-    return _by_quantity(instantaneous(whole, timing.sets, scaled, source_of))
-
-
-def _by_quantity(values: Array) -> dict[str, float]:
-    """Means over the replicates (replicates, q)."""
-    return dict(zip(dose.QUANTITIES, map(float, values.mean(axis=0)), strict=True))
+    return by_quantity(instantaneous(whole, timing.sets, scaled, source_of))

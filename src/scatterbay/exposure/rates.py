@@ -10,6 +10,7 @@ from numpy.typing import NDArray
 
 from scatterbay.engine.contributions import MINUTE, Contribution
 from scatterbay.engine.looking import BEAM, STORED, TRAVEL
+from scatterbay.physics import dose
 
 Array = NDArray[np.float64]
 
@@ -32,6 +33,11 @@ class Rates:
     def whole(self, beam: str) -> Array:
         """All paths of a beam."""
         return sum((rate for (_, name), rate in self.beams.items() if name == beam), self.nothing)
+
+
+def by_quantity(values: Array) -> dict[str, float]:
+    """Means over the replicates (replicates, q), by quantity."""
+    return dict(zip(dose.QUANTITIES, map(float, values.mean(axis=0)), strict=True))
 
 
 def rates_of(
