@@ -116,3 +116,20 @@ def test_stored_sources_are_on_the_map() -> None:
     i, j = (int(np.argmin(np.abs(axis - 1.3))) for axis in (found.second, found.first))
     assert np.isfinite(found.values[i, j])
     assert found.values[i, j] > 1e-6
+
+
+@pytest.mark.parametrize("name", ["projector-job", "pipe-shop", "weld-bay"])
+def test_nowhere_is_more_than_scatter_could_add_to_the_bare_sources(name: str) -> None:
+    """Limit: three times what the sources would give with no walls and no bodies, anywhere on the plan."""
+    scenario = load(f"scenarios/{name}.yaml")
+    plane = Plane(2, 1.0)
+    found, scene = dose_map(scenario, plane, count=44), build_scene(scenario)
+    x, y = np.meshgrid(found.first, found.second)
+    points = plane.points(x.ravel(), y.ravel()).reshape(*x.shape, 3)
+    row = dose.QUANTITIES.index(dose.AMBIENT)
+    bare = np.zeros(x.shape)
+    for beam in scene.beams:
+        square = np.maximum(((points - beam.origin) ** 2).sum(axis=-1), 0.05**2)
+        bare += beam.drive * beam.spectrum.dose_at_1_m()[row] / square
+    mapped = np.isfinite(found.values)
+    assert (found.values[mapped] <= 3.0 * bare[mapped]).all()
