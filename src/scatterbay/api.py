@@ -173,7 +173,8 @@ def worksheet(
     """
     from scatterbay.advice.barrier_facts import barrier_facts
     from scatterbay.advice.dose_map import Plane, dose_map
-    from scatterbay.engine.contributions import contributions
+    from scatterbay.advice.hand_check import hand_check
+    from scatterbay.engine.contributions import Kept, contributions
     from scatterbay.engine.scene import build_scene
     from scatterbay.exposure.assess import assess as judge
     from scatterbay.report.plan import plan_svg
@@ -184,11 +185,14 @@ def worksheet(
 
     checked = _checked(scenario)
     scene = build_scene(checked)
-    found = judge(checked, scene, contributions(scene))
+    kept: Kept = {}
+    rows = contributions(scene, kept=kept)
+    found = judge(checked, scene, rows)
+    chains = hand_check(scene, rows, kept, [place.quantity for place in found.places])
     plane = Plane(2, read(height, "length").value)
     plan = plan_svg(checked, plane, dose_map(checked, plane, count=points), found)
     advised = advise(checked) if with_advice else None
-    return written(Paper(checked, found, barrier_facts(checked, scene), plan, titles(), advised))
+    return written(Paper(checked, found, barrier_facts(checked, scene), plan, titles(), chains, advised))
 
 
 def compare(*scenarios: Scenario | str | Path) -> Comparison:

@@ -12,8 +12,10 @@ from jinja2 import Environment, StrictUndefined
 from scatterbay import __version__
 from scatterbay.advice.barrier_facts import BarrierFacts
 from scatterbay.advice.checklist import checklist
+from scatterbay.advice.hand_check import Chain
 from scatterbay.advice.whole import Advice
 from scatterbay.exposure.results import TIME_BASES, Assessment, Figure, GoalResult, PlaceResult
+from scatterbay.physics import dose
 from scatterbay.report.cautions import CAUTIONS, LOCAL_RULES, NOT_COVERED
 from scatterbay.report.states import capacity_sentence, state_sentences
 from scatterbay.report.wall import remedy_sentences
@@ -31,6 +33,7 @@ class Paper:
     barriers: Sequence[BarrierFacts]
     plan: str
     tables: Sequence[tuple[str, str]]
+    chains: Sequence[Chain] = ()
     advice: Advice | None = None
 
 
@@ -55,7 +58,10 @@ def worksheet(paper: Paper) -> str:
         barriers=[_barrier(one) for one in paper.barriers],
         sources=[_source(one) for one in scenario.sources],
         beams=[_beam(scenario, k) for k in range(len(scenario.beams))],
-        places=[_place(one) for one in paper.assessment.places],
+        places=[
+            {**_place(one), "chains": [_chain(c) for c in paper.chains if c.place == one.name]}
+            for one in paper.assessment.places
+        ],
         capacities=[capacity_sentence(one) for one in paper.assessment.capacities],
         advice=[_advice(one) for one in paper.advice.surfaces] if paper.advice else None,
         checklist=checklist(scenario),
@@ -144,6 +150,27 @@ def _place(place: PlaceResult) -> dict[str, Any]:
         "single": spoken(place.single_scatter[place.quantity], "rate", place.quantity),
         "every": spoken(place.all_scatter[place.quantity], "rate", place.quantity),
         "survey": spoken(place.figure("rate").value, "rate", place.quantity),
+    }
+
+
+def _chain(chain: Chain) -> dict[str, Any]:
+    """A chain of factors, its first in air kerma per hour and its product in the place's own unit per hour."""
+    steps = []
+    for number, step in enumerate(chain.steps):
+        scale, unit = (3600e6, "uGy/h") if number == 0 else (1.0, step.unit)
+        steps.append(
+            {
+                "what": step.what,
+                "factor": f"{scale * step.factor:.4g}",
+                "unit": unit,
+                "rests_on": step.rests_on,
+            }
+        )
+    return {
+        "title": f"{chain.path}, {chain.beam}",
+        "facts": "; ".join(chain.facts),
+        "steps": steps,
+        "product": f"{3600e6 * chain.product:.4g} u{dose.UNITS[chain.quantity]}/h",
     }
 
 
