@@ -36,9 +36,21 @@ def whole_processes() -> None:
     line("peak memory of assess, nothing kept", f"{fresh.megabytes:.0f} MB", "at most 400")
 
 
+def drawings() -> None:
+    """The plan of the weld bay, 200 points along its longer side, walls kept: against assessing it."""
+    with tempfile.TemporaryDirectory() as folder:
+        drawn = ("map", WELD_BAY, "-o", f"{folder}/plan.svg", "--force")
+        found = timed(scatterbay(*drawn), runs=1, SCATTERBAY_CACHE=folder)
+        kept = timed(scatterbay("assess", WELD_BAY), SCATTERBAY_CACHE=folder)
+    line("map of the weld bay, 200 points", f"{found.seconds:.1f} s", "at most 20")
+    line("  over assessing it", f"{found.seconds / kept.seconds:.1f}")
+    line("peak memory of map", f"{found.megabytes:.0f} MB", "at most 600")
+
+
 def main() -> None:
     """Everything."""
     whole_processes()
+    drawings()
     line("three-layer wall from scratch", f"{walls.seconds_of_three_layers():.2f} s", "at most 1 on one core")
     bare, faced = engine.pairs_per_second()
     line("(scatter point, place) pairs, no barriers", f"{bare / 1e6:.2f} million/s", "at least 4")
