@@ -9,16 +9,29 @@ from typing import TYPE_CHECKING, Any
 
 __version__ = "0.1.0"
 
-__all__ = ["__version__", "assess", "barrier", "load", "source", "table"]
+_FUNCTIONS = ("advise", "assess", "barrier", "compare", "source", "table", "wall", "worksheet")
+
+__all__ = [
+    "__version__",
+    "advise",
+    "assess",
+    "barrier",
+    "compare",
+    "load",
+    "source",
+    "table",
+    "wall",
+    "worksheet",
+]
 
 if TYPE_CHECKING:
-    from scatterbay.api import assess, barrier, source, table
+    from scatterbay.api import advise, assess, barrier, compare, source, table, wall, worksheet
     from scatterbay.scenario import load
 
 
 def __getattr__(name: str) -> Any:
     """Import on first use, so that asking for the version costs nothing."""
-    if name in ("assess", "barrier", "source", "table"):
+    if name in _FUNCTIONS:
         from scatterbay import api
 
         return getattr(api, name)

@@ -14,6 +14,11 @@ OUR_FAULT = 70
 
 def run() -> NoReturn:
     """Run the command line and exit: 0 below, 1 not below, 2 bad input, 3 outside the model, 70 our fault."""
+    if sys.argv[1:] == ["--version"]:  # asked often, by scripts: answered without the commands
+        from scatterbay import __version__
+
+        sys.stdout.write(f"scatterbay {__version__}\n")
+        sys.exit(0)
     from scatterbay.errors import ScatterbayError
 
     try:
